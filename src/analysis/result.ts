@@ -1,0 +1,136 @@
+import type { AsRead } from "../bands/index.ts";
+import type { Place, Warning } from "../messages/index.ts";
+import type { Quantity } from "../quantity/index.ts";
+
+/** One band beside its calculated position; cm-1, vacuum. */
+export interface BandResult {
+  readonly label: string;
+  readonly observed: number;
+  readonly calculated: number | null;
+  /** observed - calculated */
+  readonly residual: number | null;
+  /** as stated in the input, before any excess treatment */
+  readonly standardUncertainty: number | null;
+  readonly studentizedResidual: number | null;
+  readonly leverage: number | null;
+  /** observed - predicted when this band (and its repeats) is left out */
+  readonly leftOutResidual: number | null;
+  readonly used: boolean;
+  readonly asRead: AsRead;
+  readonly note: string | null;
+  readonly phase: string | null;
+  readonly place: Place;
+}
+
+export type DissociationMethod = "morse" | "morse-refit" | "turning-point" | "spacing-sum" | "near-limit";
+
+/** One answer to "where is the dissociation limit?", cm-1. */
+export interface DissociationRow {
+  readonly method: DissociationMethod;
+  readonly de: Quantity | null;
+  readonly d0: Quantity | null;
+  /** D0 in other units, unrounded, in the order value, standard uncertainty */
+  readonly converted: Readonly<Record<"kJ/mol" | "kcal/mol" | "eV", readonly [number, number | null]>> | null;
+  /** the caution that belongs to this row; for a null row the reason */
+  readonly note: string | null;
+}
+
+export interface Prediction {
+  readonly label: string;
+  /** true position in cm-1, vacuum */
+  readonly position: Quantity;
+  /** how far the same model misses the highest observed band when that is left out, cm-1 (absolute) */
+  readonly lastBandOut: number | null;
+  /** nm */
+  readonly vacuumWavelength: number;
+  /** nm in air; null where the dispersion formula does not hold */
+  readonly airWavelength: number | null;
+  /** a band with this label was observed and used */
+  readonly observed: boolean;
+}
+
+/** The fit of the lowest `bands` bands alone. */
+export interface StabilityRow {
+  readonly bands: number;
+  readonly we: number;
+  readonly wexe: number;
+  /** Morse, cm-1 */
+  readonly d0: number | null;
+  /** predicted position of the next overtone above those bands, cm-1 */
+  readonly next: number;
+}
+
+export interface Quality {
+  readonly bands: number;
+  readonly degreesOfFreedom: number;
+  /** null when no uncertainty was stated */
+  readonly chiSquare: number | null;
+  readonly reducedChiSquare: number | null;
+  /** probability of a larger chi-square; null as above or without degrees of freedom */
+  readonly probability: number | null;
+  /** root mean square residual, cm-1 */
+  readonly rms: number;
+  /** sqrt(RSS/degreesOfFreedom), cm-1 */
+  readonly standardDeviation: number | null;
+  readonly excess: {
+    readonly kind: "scatter" | "birge" | "none";
+    readonly value: number | null;
+    readonly applied: boolean;
+  };
+  readonly aic: number | null;
+  readonly aicc: number | null;
+  readonly leaveOneOutRms: number | null;
+}
+
+export interface Derived {
+  readonly zeroPointEnergy: Quantity;
+  readonly forceConstant: Quantity | null;
+  readonly morseA: Quantity | null;
+  readonly y00: Quantity | null;
+  readonly highestLevel: { readonly value: number; readonly range: readonly [number, number] | null } | null;
+  readonly positionPlotIntercept: Quantity;
+  readonly positionPlotSlope: Quantity;
+  readonly spacingPlotIntercept: Quantity;
+  readonly spacingPlotSlope: Quantity;
+}
+
+/** Everything `fit` says about one series: the object that stands in the JSON document, and the only thing renderers see. */
+export interface SeriesResult {
+  readonly name: string;
+  readonly model: string;
+  readonly terms: number | null;
+  readonly bond: string | null;
+  /** u */
+  readonly reducedMass: number | null;
+  readonly constants: Readonly<Record<string, Quantity>>;
+  /** constants held at a value by --fix, by key */
+  readonly held: readonly string[];
+  readonly correlation: { readonly order: readonly string[]; readonly matrix: readonly (readonly number[])[] } | null;
+  /** covariance of the free constants in the order of `correlation`, for `predict` from a stored result */
+  readonly covariance: readonly (readonly number[])[] | null;
+  readonly quality: Quality;
+  readonly bands: readonly BandResult[];
+  readonly dissociation: readonly DissociationRow[];
+  readonly derived: Derived;
+  readonly predictions: readonly Prediction[];
+  readonly stability: readonly StabilityRow[];
+  readonly fitReport: {
+    readonly method: string;
+    readonly converged: boolean;
+    readonly reason: string;
+    readonly iterations: number;
+  };
+  readonly warnings: readonly Warning[];
+}
+
+/** The document of `fit`. */
+export interface FitDocument {
+  readonly schemaVersion: 1;
+  readonly tool: { readonly name: string; readonly version: string };
+  /** the settings as the user gave them, flags over file, long names without dashes */
+  readonly request: Readonly<Record<string, string>>;
+  /** the file read, or null for flags; sha256 of its bytes */
+  readonly input: { readonly source: string; readonly sha256: string } | null;
+  readonly series: readonly SeriesResult[];
+  readonly warnings: readonly Warning[];
+}

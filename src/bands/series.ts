@@ -1,0 +1,44 @@
+import type { Place, Warning } from "../messages/index.ts";
+import type { Bond } from "../species/index.ts";
+
+export type Medium = "vacuum" | "air";
+
+/** What stood in the input before any conversion. */
+export interface AsRead {
+  /** The position as typed, for example `970.056(10)`. */
+  readonly text: string;
+  readonly unit: string;
+  readonly medium: Medium;
+  /** The uncertainty as typed (with its own unit if it had one), or null. */
+  readonly sigmaText: string | null;
+}
+
+/** One observed band: `position` and `sigma` (standard uncertainty, k = 1) in cm-1, vacuum. */
+export interface Band {
+  readonly label: string;
+  readonly position: number;
+  readonly sigma: number | null;
+  readonly isotopologue: Bond | null;
+  /** false: kept and shown, not fitted. */
+  readonly use: boolean;
+  readonly phase: string | null;
+  readonly group: string | null;
+  /** Position (cm-1, vacuum) of a weak companion and the intensity ratio band/companion, where given. */
+  readonly companion: number | null;
+  readonly ratio: number | null;
+  readonly note: string | null;
+  readonly place: Place;
+  readonly asRead: AsRead;
+}
+
+/** The bands of one oscillator, on a common footing: cm-1 in vacuum. */
+export interface Series {
+  readonly name: string;
+  readonly bond: Bond | null;
+  readonly bands: readonly Band[];
+  /** Fully correlated part of the uncertainty, one signed entry a band in cm-1; null without one. */
+  readonly shared: readonly number[] | null;
+  /** true: spacings (v+1 - v) were subtracted from measured positions, so neighbours share errors. */
+  readonly subtracted: boolean;
+  readonly warnings: readonly Warning[];
+}

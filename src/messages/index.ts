@@ -1,0 +1,4 @@
+export * from "./exit-codes.ts";
+export * from "./fault.ts";
+export * from "./place.ts";
+export type * from "./warning.ts";
