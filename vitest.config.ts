@@ -4,7 +4,7 @@ export default defineConfig({
   test: {
     include: ["tests/**/*.test.ts"],
     testTimeout: 60_000,
-    reporters: process.env["CI"]
+    reporters: process.env.CI
       ? ["default", ["json", { outputFile: "node_modules/.rungwise/tests.json" }]]
       : ["default"],
   },

@@ -1,1 +1,6 @@
+export { analyse } from "./analyse.ts";
+export type { AnalysisOptions, ExcessKind } from "./options.ts";
+export { predict } from "./predictions.ts";
+export { type Propagation, propagate, quantityFrom } from "./propagation.ts";
 export type * from "./result.ts";
+export { turningPoint } from "./turning-point.ts";

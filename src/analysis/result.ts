@@ -60,6 +60,25 @@ export interface StabilityRow {
   readonly next: number;
 }
 
+/** One number of terms beside the others, as `--terms auto` compares them; with the uncertainties as stated. */
+export interface ComparisonRow {
+  readonly terms: number;
+  readonly degreesOfFreedom: number;
+  readonly chiSquare: number | null;
+  readonly probability: number | null;
+  readonly rms: number;
+  readonly aic: number | null;
+  readonly aicc: number | null;
+  readonly leaveOneOutRms: number | null;
+  /** the test of this number against one fewer */
+  readonly step: {
+    readonly kind: "χ²-difference" | "F";
+    readonly statistic: number;
+    readonly probability: number;
+  } | null;
+  readonly chosen: boolean;
+}
+
 export interface Quality {
   readonly bands: number;
   readonly degreesOfFreedom: number;
@@ -80,6 +99,8 @@ export interface Quality {
   readonly aic: number | null;
   readonly aicc: number | null;
   readonly leaveOneOutRms: number | null;
+  /** degrees of freedom of Student's t behind the intervals; null: normal distribution */
+  readonly intervalDegreesOfFreedom: number | null;
 }
 
 export interface Derived {
@@ -114,6 +135,8 @@ export interface SeriesResult {
   readonly derived: Derived;
   readonly predictions: readonly Prediction[];
   readonly stability: readonly StabilityRow[];
+  /** with --terms auto: the numbers of terms compared; otherwise null */
+  readonly comparison: readonly ComparisonRow[] | null;
   readonly fitReport: {
     readonly method: string;
     readonly converged: boolean;

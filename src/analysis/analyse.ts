@@ -1,0 +1,197 @@
+import type { Series } from "../bands/index.ts";
+import { informationCriteria } from "../fitting/index.ts";
+import type { Warning } from "../messages/index.ts";
+import type { Model, Well } from "../models/index.ts";
+import { chooseTerms } from "./choice-of-terms.ts";
+import { derivedNumbers, highestLevel } from "./derived.ts";
+import { dissociationRows } from "./dissociation/rows.ts";
+import { fitWarnings } from "./fit-warnings.ts";
+import type { AnalysisOptions } from "./options.ts";
+import { predict } from "./predictions.ts";
+import { propagate } from "./propagation.ts";
+import type { BandResult, Prediction, Quality, SeriesResult } from "./result.ts";
+import { type Solution, solve } from "./solution.ts";
+import { stabilityRows } from "./stability.ts";
+import { y00Of } from "./y00.ts";
+
+/** How many overtones beyond the last band are predicted when nothing else is asked. */
+const LEVELS_BEYOND = 3;
+
+/**
+ * Fit one series and derive everything that follows. Pure; units as in SeriesResult.
+ * Throws InputError with exit 3 when the bands do not determine the constants.
+ */
+export function analyse(series: Series, model: Model, asked: AnalysisOptions): SeriesResult {
+  const choice = asked.autoTerms && model.terms !== null ? chooseTerms(series, model, asked) : null;
+  const options = choice === null ? asked : { ...asked, terms: choice.terms };
+  const solution = solve(series, model, options);
+  const { fit, by } = solution;
+  const p = fit.values;
+  const well = model.well!(p);
+  const reducedMass = series.bond?.reducedMass ?? null;
+  const top = Math.max(...solution.used.map((band) => model.levels(band.label).upper));
+  const y00 = y00Of(well, p, options, reducedMass);
+  const bands = bandResults(solution);
+  const { predictions, warnings } = predictionsOf(solution, well, top);
+  const free = solution.stated.keys.flatMap((key, k) => (options.fixed[key]?.sigma === null ? [] : [k]));
+  return {
+    name: series.name,
+    model: model.name,
+    terms: model.terms === null ? null : p.length,
+    bond: series.bond?.text ?? null,
+    reducedMass,
+    constants: Object.fromEntries(
+      fit.keys.map((key, k) => [
+        key,
+        free.includes(k)
+          ? propagate(p[k]!, unit(p.length, k), "cm-1", by)
+          : { value: p[k]!, standardUncertainty: null, interval95: null, unit: "cm-1" },
+      ]),
+    ),
+    held: fit.keys.filter((_, k) => !free.includes(k)),
+    ...correlationOf(fit.keys, free, fit.covariance),
+    quality: qualityOf(solution),
+    bands,
+    dissociation: dissociationRows(solution, well, top, y00?.value ?? 0),
+    derived: derivedNumbers(well, p, by, reducedMass, y00),
+    predictions,
+    stability: stabilityRows(solution),
+    comparison: choice?.comparison ?? null,
+    fitReport: {
+      method: "generalised least squares on the band positions, Householder QR on scaled columns",
+      converged: fit.converged,
+      reason: fit.reason,
+      iterations: fit.iterations,
+    },
+    warnings: [
+      ...series.warnings,
+      ...(choice?.warnings ?? []),
+      ...fitWarnings(solution, choice !== null),
+      ...warnings,
+      ...aboutWell(well, p, series, options, y00 !== null),
+    ],
+  };
+}
+
+const unit = (size: number, at: number) => Array.from({ length: size }, (_, k) => (k === at ? 1 : 0));
+
+function correlationOf(
+  keys: readonly string[],
+  free: readonly number[],
+  covariance: readonly (readonly number[])[] | null,
+): Pick<SeriesResult, "correlation" | "covariance"> {
+  if (covariance === null) return { correlation: null, covariance: null };
+  const part = free.map((i) => free.map((j) => covariance[i]![j]!));
+  const matrix = part.map((row, i) => row.map((c, j) => (i === j ? 1 : c / Math.sqrt(part[i]![i]! * part[j]![j]!))));
+  return { correlation: { order: free.map((k) => keys[k]!), matrix }, covariance: part };
+}
+
+function qualityOf(solution: Solution): Quality {
+  const { stated, fit, sigmaKnown, used, excess, probability, leftOut } = solution;
+  const dof = stated.degreesOfFreedom;
+  const squares = fit.residuals.reduce((sum, r) => sum + r * r, 0);
+  const constants = stated.keys.length - Object.values(solution.options.fixed).filter((f) => f.sigma === null).length;
+  const errors = leftOut.filter((e) => e !== null);
+  return {
+    bands: used.length,
+    degreesOfFreedom: dof,
+    chiSquare: sigmaKnown ? stated.chiSquare : null,
+    reducedChiSquare: sigmaKnown && dof > 0 ? stated.chiSquare / dof : null,
+    probability,
+    rms: Math.sqrt(squares / used.length),
+    standardDeviation: dof > 0 ? Math.sqrt(squares / dof) : null,
+    excess,
+    ...informationCriteria(sigmaKnown, stated.chiSquare, used.length, constants),
+    intervalDegreesOfFreedom: solution.by.degreesOfFreedom,
+    leaveOneOutRms:
+      errors.length < used.length ? null : Math.sqrt(errors.reduce((sum, e) => sum + e * e, 0) / errors.length),
+  };
+}
+
+function bandResults({ series, model, options, used, fit, tests, leftOut }: Solution): BandResult[] {
+  const { calculated } = model.prepare(series.bands, options).evaluate(fit.values);
+  return series.bands.map((band, i) => {
+    const at = used.indexOf(band);
+    const of = <T>(list: readonly T[]): T | null => (at < 0 ? null : (list[at] ?? null));
+    return {
+      label: band.label,
+      observed: band.position,
+      calculated: calculated[i]!,
+      residual: band.position - calculated[i]!,
+      standardUncertainty: band.sigma,
+      studentizedResidual: of(tests.studentized),
+      leverage: of(fit.leverage),
+      leftOutResidual: of(leftOut),
+      used: band.use,
+      asRead: band.asRead,
+      note: band.note,
+      phase: band.phase,
+      place: band.place,
+    };
+  });
+}
+
+function predictionsOf(
+  { model, options, used, fit, by, leftOut }: Solution,
+  well: Well,
+  top: number,
+): { predictions: Prediction[]; warnings: Warning[] } {
+  const highest = highestLevel(well, by)?.value ?? null;
+  const wanted = options.upTo ?? top + LEVELS_BEYOND;
+  const upTo = highest === null ? wanted : Math.min(wanted, highest);
+  const topBand = used.findIndex((band) => model.levels(band.label).upper === top);
+  const miss = leftOut[topBand] ?? null;
+  const predictions = predict(
+    model,
+    options,
+    model.labels(upTo),
+    fit.values,
+    by,
+    miss === null ? null : Math.abs(miss),
+    used,
+  );
+  const warnings: Warning[] = [];
+  if (options.upTo !== null && upTo < options.upTo)
+    warnings.push({
+      code: "above-highest-level",
+      message: `predictions end at ${upTo}-0: the fitted series has no bound level above v = ${upTo}; ask for --up-to ${upTo} or less`,
+    });
+  if (predictions.some((line) => line.vacuumWavelength > 1690))
+    warnings.push({
+      code: "air-range-extended",
+      message:
+        "air wavelengths beyond 1690 nm extrapolate Ciddor's dispersion formula (error about 1e-4 cm-1); use the vacuum values where that matters",
+    });
+  return { predictions, warnings };
+}
+
+function aboutWell(
+  well: Well,
+  p: readonly number[],
+  series: Series,
+  options: AnalysisOptions,
+  y00Known: boolean,
+): Warning[] {
+  const warnings: Warning[] = [];
+  if (!(p[well.leading[1]]! > 0))
+    warnings.push({
+      code: "wexe-not-positive",
+      message:
+        "ωexe came out ≤ 0: the spacings do not shrink, so no dissociation energy follows; check the labels (positions or spacings?) and the bands",
+      about: "wexe",
+    });
+  if (series.bond === null)
+    warnings.push({
+      code: "no-bond",
+      message: "no masses are known, so force constant and Morse a are left out; give --bond or --reduced-mass",
+    });
+  if (!y00Known)
+    warnings.push({
+      code: "y00-unknown",
+      message:
+        options.re !== null && options.alphaE === null
+          ? "re alone does not determine Y00 (an exact Morse curve has none); De and the zero point leave it out; give --alpha-e too"
+          : "De and the zero point leave out Dunham's Y00 (0.2 cm-1 for CO, 9 for H2; D0 does not depend on it); give --be or --re, and --alpha-e",
+    });
+  return warnings;
+}

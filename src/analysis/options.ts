@@ -1,0 +1,22 @@
+import type { ModelOptions } from "../models/index.ts";
+import type { AirConditions } from "../quantity/index.ts";
+
+export type ExcessKind = "scatter" | "birge" | "none";
+
+/** Everything `analyse` may be told beside the series and the model; nothing is optional here. */
+export interface AnalysisOptions extends ModelOptions {
+  /** choose the number of terms by what the bands support; `terms` then counts for nothing */
+  readonly autoTerms: boolean;
+  readonly excess: ExcessKind;
+  /** a given τ in cm-1, used whatever χ² says; null: estimated where needed */
+  readonly scatter: number | null;
+  /** a further level of intervals, printed beside the 95 % ones */
+  readonly coverage: number | null;
+  /** highest level to predict; null: three beyond the last band */
+  readonly upTo: number | null;
+  readonly air: AirConditions;
+  /** rotational constants in cm-1, bond length in Å */
+  readonly be: number | null;
+  readonly alphaE: number | null;
+  readonly re: number | null;
+}

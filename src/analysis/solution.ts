@@ -1,0 +1,157 @@
+import type { Band, Series } from "../bands/index.ts";
+import {
+  birgeFactor,
+  type Diagnostics,
+  diagnose,
+  type ErrorModel,
+  fitLinear,
+  fitWithScatter,
+  type LinearFit,
+  type Problem,
+  type Treatment,
+  UNTREATED,
+  UndeterminedError,
+} from "../fitting/index.ts";
+import { InputError } from "../messages/index.ts";
+import type { Model } from "../models/index.ts";
+import { chiSquareUpperTail } from "../quantity/index.ts";
+import { errorModel as errorModelOf } from "./error-model.ts";
+import type { AnalysisOptions } from "./options.ts";
+import type { Propagation } from "./propagation.ts";
+
+/** A fitted series before anything is derived from it. */
+export interface Solution {
+  readonly series: Series;
+  readonly model: Model;
+  readonly options: AnalysisOptions;
+  readonly used: readonly Band[];
+  readonly errors: ErrorModel;
+  readonly sigmaKnown: boolean;
+  /** the fit with the uncertainties as stated: χ² and residual tests */
+  readonly stated: LinearFit;
+  readonly tests: Diagnostics;
+  /** the fit after the excess treatment: constants and everything after */
+  readonly fit: LinearFit;
+  readonly treatment: Treatment;
+  readonly excess: {
+    readonly kind: "scatter" | "birge" | "none";
+    readonly value: number | null;
+    readonly applied: boolean;
+  };
+  /** probability of a larger χ² by chance; null without σ or degrees of freedom */
+  readonly probability: number | null;
+  readonly leftOut: readonly (number | null)[];
+  readonly by: Propagation;
+}
+
+/** χ² less probable than this is treated as excess (and more probable than 1 minus this is mentioned). */
+export const IMPROBABLE = 0.05;
+
+/** Fit the used bands of a series. Throws InputError with exit 3 when they do not determine the constants. */
+export function solve(series: Series, model: Model, options: AnalysisOptions): Solution {
+  const used = series.bands.filter((band) => band.use);
+  const errors = errorModelOf(series, used, model);
+  const problem: Problem = { ...model.prepare(used, options), observed: used.map((band) => band.position), errors };
+  const stated = determined(series, used, problem);
+  const sigmaKnown = errors.sigmas !== null;
+  const dof = stated.degreesOfFreedom;
+  const probability = sigmaKnown && dof > 0 ? chiSquareUpperTail(stated.chiSquare, dof) : null;
+  const excess = treat(problem, stated, probability, options);
+  const groups = repeats(used);
+  const tests = diagnose(stated, groups);
+  const estimated = !sigmaKnown || (excess.applied && options.scatter === null);
+  return {
+    series,
+    model,
+    options,
+    used,
+    errors,
+    sigmaKnown,
+    stated,
+    tests,
+    fit: excess.fit,
+    treatment: excess.treatment,
+    excess: { kind: excess.kind, value: excess.value, applied: excess.applied },
+    probability,
+    leftOut: excess.fit === stated ? tests.leftOut : diagnose(excess.fit, groups).leftOut,
+    by: {
+      covariance: excess.fit.covariance,
+      degreesOfFreedom: estimated ? dof : null,
+      coverage: options.coverage,
+    },
+  };
+}
+
+/** As `solve`, but null when the bands do not determine the constants. */
+export function trySolve(series: Series, model: Model, options: AnalysisOptions): Solution | null {
+  try {
+    return solve(series, model, options);
+  } catch (error) {
+    if (error instanceof InputError) return null;
+    throw error;
+  }
+}
+
+/** Some of the used bands fitted alone, with the errors and the treatment of the whole fit; null when they do not determine it. */
+export function fitSome(solution: Solution, bands: readonly Band[]): LinearFit | null {
+  const { model, options, series, treatment, sigmaKnown } = solution;
+  const errors = errorModelOf(series, bands, model);
+  const problem = { ...model.prepare(bands, options), observed: bands.map((band) => band.position) };
+  try {
+    return fitLinear({ ...problem, errors: sigmaKnown ? errors : { ...errors, sigmas: null } }, treatment);
+  } catch (error) {
+    if (error instanceof UndeterminedError) return null;
+    throw error;
+  }
+}
+
+function determined(series: Series, used: readonly Band[], problem: Problem): LinearFit {
+  try {
+    return fitLinear(problem);
+  } catch (error) {
+    if (!(error instanceof UndeterminedError)) throw error;
+    const free = problem.parameters.filter((p) => p.held === undefined);
+    const distinct = new Set(used.map((band) => band.label)).size;
+    const place = { source: series.bands[0]?.place.source ?? series.name };
+    const few = `${distinct} different used band${distinct === 1 ? "" : "s"} cannot determine ${free.length} constants (${free.map((p) => p.symbol).join(", ")})`;
+    const mend =
+      distinct < free.length
+        ? `give at least ${free.length} different bands, ask for fewer --terms, or hold a constant with --fix`
+        : `they leave ${problem.parameters[error.parameter]!.symbol} open; add a band from another level or hold that constant with --fix`;
+    throw new InputError([{ code: "not-determined", place, what: `series "${series.name}": ${few}`, mend }], 3);
+  }
+}
+
+interface Treated {
+  readonly fit: LinearFit;
+  readonly treatment: Treatment;
+  readonly kind: "scatter" | "birge" | "none";
+  readonly value: number | null;
+  readonly applied: boolean;
+}
+
+function treat(problem: Problem, stated: LinearFit, probability: number | null, options: AnalysisOptions): Treated {
+  if (options.scatter !== null && problem.errors.sigmas !== null) {
+    const treatment = { scatter: options.scatter, factor: 1 };
+    return { fit: fitLinear(problem, treatment), treatment, kind: "scatter", value: options.scatter, applied: true };
+  }
+  const idle = { fit: stated, treatment: UNTREATED, kind: options.excess, value: null, applied: false };
+  if (options.excess === "none" || probability === null || probability >= IMPROBABLE) return idle;
+  if (options.excess === "birge") {
+    const treatment = { scatter: 0, factor: birgeFactor(stated) };
+    return { fit: fitLinear(problem, treatment), treatment, kind: "birge", value: treatment.factor, applied: true };
+  }
+  const { tau, fit } = fitWithScatter(problem, stated);
+  return { fit, treatment: { scatter: tau, factor: 1 }, kind: "scatter", value: tau, applied: true };
+}
+
+/** Data that leave together: repeats of one band. */
+function repeats(used: readonly Band[]): number[][] {
+  const groups = new Map<string, number[]>();
+  used.forEach((band, i) => {
+    const group = groups.get(band.label);
+    if (group === undefined) groups.set(band.label, [i]);
+    else group.push(i);
+  });
+  return [...groups.values()];
+}

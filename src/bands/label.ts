@@ -1,0 +1,47 @@
+import type { Fault } from "../messages/index.ts";
+import type { Band } from "./series.ts";
+
+/** Upper and lower level of a label v'-v". */
+export interface Levels {
+  readonly upper: number;
+  readonly lower: number;
+}
+
+/** Read v'-v", such as 3-0; null for anything else. The order of the levels is not checked. */
+export function readVibrationalLabel(label: string): Levels | null {
+  const [, upper, lower] = /^(\d{1,3})-(\d{1,3})$/.exec(label) ?? [];
+  return upper === undefined || lower === undefined ? null : { upper: Number(upper), lower: Number(lower) };
+}
+
+/** One form for a label: any dash or minus as hyphen, single spaces, none around the hyphen of v'-v". */
+export function canonicalLabel(label: string): string {
+  const tidy = label
+    .trim()
+    .replace(/[−‐‑–—]/g, "-")
+    .replace(/\s+/g, " ");
+  const [, upper, lower] = /^v?\s*0*(\d+) ?- ?0*(\d+)$/.exec(tidy) ?? [];
+  return upper === undefined ? tidy : `${upper}-${lower}`;
+}
+
+/** What is wrong with a band whose label must be v'-v" with v' > v"; null when nothing is. */
+export function vibrationalLabelFault({ label, place }: Band): Fault | null {
+  const levels = readVibrationalLabel(label);
+  const at = { ...place, column: place.column ?? "band" };
+  if (levels === null)
+    return {
+      code: "label",
+      place: at,
+      what: `"${label}" is not a label`,
+      mend: `write v'-v", such as 1-0, 3-0 or 2-1`,
+    };
+  if (levels.upper > levels.lower) return null;
+  return {
+    code: "upper-not-above-lower",
+    place: at,
+    what: `in "${label}" the upper level does not lie above the lower one`,
+    mend:
+      levels.upper === levels.lower
+        ? "write two different levels, such as 2-1"
+        : `write ${levels.lower}-${levels.upper}`,
+  };
+}

@@ -1,0 +1,139 @@
+import type { Fault } from "../messages/index.ts";
+import { readMeasurement } from "../quantity/index.ts";
+import type { Bond } from "../species/index.ts";
+import { bondFrom, type Context, isWrong, mediumFrom, unitFrom } from "./context.ts";
+import { type Footing, type Placed, placePosition, rate, readUncertainty, type Wrong } from "./conversion.ts";
+import { canonicalLabel } from "./label.ts";
+import type { ColumnName, RawRow } from "./raw.ts";
+import type { Band } from "./series.ts";
+
+/** A band, and whether its air wavelength lies beyond the dispersion formula. */
+export interface ReadBand {
+  readonly band: Band;
+  readonly extrapolated: boolean;
+}
+
+const YES = ["yes", "y", "true", "1"];
+const NO = ["no", "n", "false", "0"];
+
+/** Understand one row; null after its faults were added. `bonds` remembers the bonds already read. */
+export function readBand(
+  row: RawRow,
+  context: Context,
+  bonds: Map<string, Bond | Wrong>,
+  faults: Fault[],
+): ReadBand | null {
+  const { cells, place } = row;
+  const before = faults.length;
+  const named = cells.series === undefined ? "" : `series "${cells.series}": `;
+  const wrong = (column: ColumnName, { code, what, mend }: Wrong): null => {
+    faults.push({ code, place: { ...place, column: place.column ?? column }, what: `${named}${what}`, mend });
+    return null;
+  };
+  const read = <T>(column: ColumnName, reader: (text: string) => T | Wrong): T | null => {
+    const text = cells[column];
+    if (text === undefined) return null;
+    const value = reader(text);
+    return isWrong(value) ? wrong(column, value) : value;
+  };
+
+  const unit = read("unit", unitFrom) ?? context.unit;
+  const footing: Footing = { unit, medium: read("medium", mediumFrom) ?? context.medium, air: context.air };
+  const label = labelOf(cells);
+  if (label === "")
+    wrong("band", { code: "no-label", what: "has no label", mend: 'write one such as 1-0 in the column "band"' });
+  const position: Placed | null =
+    cells.position === undefined
+      ? wrong("position", { code: "no-position", what: "has no position", mend: "write a value such as 2885.98" })
+      : read("position", (text) => placePosition(text, footing));
+  const sigma = position === null ? null : sigmaOf(cells, position, footing, context, wrong);
+  const use = read("use", useFrom) ?? true;
+  const isotopologue = read("isotopologue", (text) => {
+    const known = bonds.get(text) ?? bondFrom(text);
+    bonds.set(text, known);
+    return known;
+  });
+  const companion = read("companion", (text) => placePosition(text, footing));
+  const ratio = read("ratio", ratioFrom);
+  if (position === null || faults.length > before) return null;
+  if (companion !== null && companion.wavenumber === position.wavenumber)
+    return wrong("companion", {
+      code: "companion-equals-band",
+      what: "the companion stands where the band stands",
+      mend: "give the position of the weaker band of the pair",
+    });
+  return {
+    extrapolated: position.extrapolated,
+    band: {
+      label,
+      position: position.wavenumber,
+      sigma: sigma?.value ?? null,
+      isotopologue,
+      use,
+      phase: cells.phase ?? context.phase,
+      group: cells.group ?? null,
+      companion: companion?.wavenumber ?? null,
+      ratio,
+      note: cells.note ?? null,
+      place,
+      asRead: { text: cells.position!, unit, medium: footing.medium, sigmaText: sigma?.text ?? null },
+    },
+  };
+}
+
+function labelOf(cells: RawRow["cells"]): string {
+  if (cells.band !== undefined) return canonicalLabel(cells.band);
+  if (cells.upper === undefined || cells.lower === undefined) return "";
+  return canonicalLabel(`${cells.upper}-${cells.lower}`);
+}
+
+/** Standard uncertainty in cm-1: written beside the position, else in its own column, else from the settings. */
+function sigmaOf(
+  cells: RawRow["cells"],
+  { wavenumber, stated }: Placed,
+  footing: Footing,
+  context: Context,
+  wrong: (column: ColumnName, wrong: Wrong) => null,
+): { value: number; text: string } | null {
+  const inWavenumbers = (value: number, unit = footing.unit) => value * Math.abs(rate(wavenumber, unit, footing));
+  if (stated !== null && cells.sigma !== undefined)
+    return wrong("sigma", {
+      code: "sigma-twice",
+      what: "the uncertainty stands beside the position and in its own column",
+      mend: "give it once",
+    });
+  if (stated !== null) {
+    const factor = stated.expanded ? context.meaning : 1;
+    return { value: inWavenumbers(stated.value) * factor, text: `${stated.value}` };
+  }
+  if (cells.sigma !== undefined) {
+    const sigma = readUncertainty(cells.sigma);
+    if (isWrong(sigma)) return wrong("sigma", sigma);
+    const unit = cells.sigma_unit === undefined ? sigma.unit : unitFrom(cells.sigma_unit);
+    if (isWrong(unit)) return wrong("sigma_unit", unit);
+    const text = cells.sigma_unit === undefined ? cells.sigma : `${cells.sigma} ${cells.sigma_unit}`;
+    return { value: inWavenumbers(sigma.value, unit ?? undefined) * context.meaning, text };
+  }
+  if (context.sigma === null) return null;
+  return {
+    value: inWavenumbers(context.sigma.value, context.sigma.unit ?? undefined) * context.meaning,
+    text: context.sigma.text,
+  };
+}
+
+function useFrom(text: string): boolean | Wrong {
+  const word = text.toLowerCase();
+  if (YES.includes(word)) return true;
+  if (NO.includes(word)) return false;
+  return { code: "use", what: `"${text}" is neither yes nor no`, mend: "write yes or no" };
+}
+
+function ratioFrom(text: string): number | Wrong {
+  const read = readMeasurement(text);
+  if (read.ok && read.value > 0) return read.value;
+  return {
+    code: "ratio",
+    what: `"${text}" is not a positive intensity ratio`,
+    mend: "write band over companion, such as 6.7",
+  };
+}

@@ -1,0 +1,158 @@
+import { CsvError, parse } from "csv-parse/sync";
+import { editDistance, type Fault, InputError, nearest } from "../messages/index.ts";
+import { type ColumnName, columnNames, type RawInput, type RawRow } from "./raw.ts";
+import { type Setting, settingNames } from "./settings.ts";
+
+/**
+ * Read CSV or TSV. `#` at the start of a line or after a space begins a comment (in a label, `210E#2`, it does not);
+ * `# name: value` above the header is a setting when the name is one. Lines keep their numbers.
+ */
+export function readCsv(text: string, source: string, delimiter: string): RawInput {
+  const faults: Fault[] = [];
+  const lines = text.split(/\r\n|\n|\r/);
+  const headerAt = lines.findIndex((line) => line.trim() !== "" && !/^\s*#/.test(line));
+  const settings = readPreamble(headerAt < 0 ? lines : lines.slice(0, headerAt), source, faults);
+  const table = headerAt < 0 ? [] : parseLines(lines.slice(headerAt).map(withoutComment), source, delimiter, headerAt);
+  const [header, ...records] = table;
+  if (header === undefined) {
+    // A file of settings alone may hold its bands in one of them.
+    if (faults.length === 0 && (settings.has("bands") || settings.has("series"))) return { settings, rows: [] };
+    faults.push({
+      code: "no-header",
+      place: { source },
+      what: "has no header",
+      mend: "begin the table with a line such as band,position",
+    });
+    throw new InputError(faults);
+  }
+  const columns = readHeader(header, source, faults);
+  if (records.length === 0)
+    faults.push({
+      code: "no-rows",
+      place: { source, line: header.line },
+      what: "has a header but no bands",
+      mend: "write one band a line below it, such as 1-0,2885.98",
+    });
+  const rows = records.map(({ cells, line }): RawRow => {
+    if (cells.slice(columns.length).some((cell) => cell !== ""))
+      faults.push({
+        code: "too-many-cells",
+        place: { source, line },
+        what: `has ${cells.length} cells under ${columns.length} columns`,
+        mend: 'put quotes around a cell that holds the separator, such as "a, b"; decimals take a point',
+      });
+    const named = columns.flatMap((column, i) =>
+      column !== null && (cells[i] ?? "") !== "" ? [[column, cells[i]!] as const] : [],
+    );
+    return { cells: Object.fromEntries(named), place: { source, line } };
+  });
+  if (faults.length > 0) throw new InputError(faults);
+  return { settings, rows };
+}
+
+interface Line {
+  readonly cells: readonly string[];
+  readonly line: number;
+}
+
+function parseLines(lines: readonly string[], source: string, delimiter: string, offset: number): Line[] {
+  try {
+    const records = parse(lines.join("\n"), {
+      delimiter,
+      info: true,
+      relax_column_count: true,
+      relax_quotes: true,
+      skip_empty_lines: true,
+      skip_records_with_empty_values: true,
+      trim: true,
+    }) as unknown as { record: string[]; info: { lines: number } }[];
+    return records.map(({ record, info }) => ({ cells: record, line: info.lines + offset }));
+  } catch (error) {
+    if (!(error instanceof CsvError)) throw error;
+    const line = typeof error.lines === "number" ? { line: error.lines + offset } : {};
+    throw new InputError([
+      {
+        code: "csv-form",
+        place: { source, ...line },
+        what: "the quotes of a cell do not close",
+        mend: 'write "…" around the whole cell',
+      },
+    ]);
+  }
+}
+
+/** Cut a comment that begins after white space, outside quotes. */
+function withoutComment(line: string): string {
+  if (!line.includes("#")) return line;
+  let quoted = false;
+  for (let i = 0; i < line.length; i++) {
+    if (line[i] === '"') quoted = !quoted;
+    else if (line[i] === "#" && !quoted && (i === 0 || /[\s,]/.test(line[i - 1]!))) return line.slice(0, i);
+  }
+  return line;
+}
+
+function readPreamble(lines: readonly string[], source: string, faults: Fault[]): Map<string, Setting> {
+  const settings = new Map<string, Setting>();
+  lines.forEach((text, i) => {
+    const [, name, value] = /^\s*#+\s*([A-Za-z][A-Za-z_-]*)\s*:\s*(.*?)\s*$/.exec(text) ?? [];
+    if (name === undefined || value === undefined) return;
+    const place = { source, line: i + 1 };
+    const key = name.toLowerCase().replaceAll("_", "-");
+    if (settingNames.includes(key)) settings.set(key, { value, place });
+    else {
+      const guess = nearest(key, settingNames);
+      // Other words before a colon are comments; one slip away from a setting is a slip.
+      if (guess !== null && guess.length > 3 && editDistance(key, guess) === 1)
+        faults.push({
+          code: "unknown-setting",
+          place,
+          what: `there is no setting "${name}"`,
+          mend: `write ${guess}, or take the colon away if it is a comment`,
+        });
+    }
+  });
+  return settings;
+}
+
+function readHeader({ cells, line }: Line, source: string, faults: Fault[]): (ColumnName | null)[] {
+  const place = { source, line };
+  const columns = cells.map((cell) => {
+    const name = cell.toLowerCase().replace(/[\s-]+/g, "_");
+    const found = columnNames.find((column) => column === name) ?? null;
+    if (found === null && name !== "") {
+      const guess = nearest(name, columnNames);
+      faults.push({
+        code: "unknown-column",
+        place,
+        what: `there is no column "${cell}"${guess === null ? "" : ` (did you mean ${guess}?)`}`,
+        mend: `the columns are ${columnNames.join(", ")}`,
+      });
+    }
+    return found;
+  });
+  columns.forEach((column, i) => {
+    if (column !== null && columns.indexOf(column) !== i)
+      faults.push({
+        code: "column-twice",
+        place,
+        what: `has the column "${column}" twice`,
+        mend: "name each column once",
+      });
+  });
+  if (!columns.includes("position"))
+    faults.push({
+      code: "no-position",
+      place,
+      what: "has no column position",
+      mend: "begin the table with a line such as band,position",
+    });
+  if (!columns.includes("band") && !(columns.includes("upper") && columns.includes("lower")))
+    faults.push({
+      code: "no-label",
+      place,
+      what: "has no column with the labels of the bands",
+      mend: "add a column band (1-0, 2-0 …), or upper and lower",
+    });
+  return columns;
+}

@@ -1,0 +1,99 @@
+import { type Fault, InputError, type Warning } from "../messages/index.ts";
+import type { Bond } from "../species/index.ts";
+import { type Context, readContext } from "./context.ts";
+import { rate, type Wrong } from "./conversion.ts";
+import type { RawRow } from "./raw.ts";
+import { type ReadBand, readBand } from "./read-band.ts";
+import type { Series } from "./series.ts";
+import type { Settings } from "./settings.ts";
+import { phaseFaults, repeatChecks } from "./validate.ts";
+
+/** Bands on a common footing, one series a name. */
+export interface Understood {
+  readonly series: readonly Series[];
+  readonly warnings: readonly Warning[];
+}
+
+/**
+ * Understand rows: cm-1 in vacuum, standard uncertainties, series by name in order of appearance.
+ * Throws InputError with everything that is wrong.
+ */
+export function toSeries(rows: readonly RawRow[], settings: Settings): Understood {
+  const faults: Fault[] = [];
+  const context = readContext(settings, faults);
+  const bonds = new Map<string, Bond | Wrong>();
+  const groups = new Map<string | null, ReadBand[]>();
+  for (const row of rows) {
+    const read = readBand(row, context, bonds, faults);
+    if (read === null) continue;
+    const name = row.cells.series ?? null;
+    const group = groups.get(name);
+    if (group === undefined) groups.set(name, [read]);
+    else group.push(read);
+  }
+  const several = groups.size > 1;
+  const series = [...groups].map(([name, bands]) => oneSeries(name, bands, context, several, faults));
+  if (faults.length > 0) throw new InputError(faults);
+  return { series, warnings: [] };
+}
+
+function oneSeries(
+  name: string | null,
+  read: readonly ReadBand[],
+  context: Context,
+  several: boolean,
+  faults: Fault[],
+): Series {
+  const bands = read.map(({ band }) => band);
+  const shown = name ?? (several ? "unnamed" : null);
+  const before = shown === null ? "" : `series "${shown}": `;
+  faults.push(...phaseFaults(bands, before));
+  const { faults: repeated, warnings } = repeatChecks(bands, before);
+  faults.push(...repeated);
+  const texts = new Set(bands.map((band) => band.isotopologue?.text ?? null));
+  const bond = texts.size === 1 && !texts.has(null) ? bands[0]!.isotopologue : context.bond;
+  const used = bands.filter((band) => band.use);
+  if (used.length === 0 && faults.length === 0)
+    faults.push({
+      code: "no-used-bands",
+      place: { source: bands[0]!.place.source },
+      what: `${before}every band is marked use: no`,
+      mend: "mark the bands to fit with use: yes, or leave the column out",
+    });
+  return {
+    name: name ?? context.name ?? bond?.text ?? "oscillator",
+    bond,
+    bands,
+    shared: sharedPart(read, context),
+    subtracted: context.subtracted,
+    warnings: [...warnings, ...aboutSigma(used), ...aboutAir(read)],
+  };
+}
+
+/** The calibration offset of each band in cm-1, signed: dν̃/d(unit) times the offset in its own unit. */
+function sharedPart(read: readonly ReadBand[], { shared, medium, air }: Context): number[] | null {
+  if (shared === null) return null;
+  return read.map(({ band }) => shared.value * rate(band.position, shared.unit, { unit: shared.unit, medium, air }));
+}
+
+function aboutSigma(used: Series["bands"]): Warning[] {
+  const without = used.filter((band) => band.sigma === null);
+  if (without.length === 0 || without.length === used.length) return [];
+  return [
+    {
+      code: "sigma-partly-missing",
+      message: `${without.map((band) => band.label).join(", ")} carr${without.length === 1 ? "ies" : "y"} no σ while others do: σ is treated as unknown for all, and every band counts the same; give --sigma for those without`,
+    },
+  ];
+}
+
+function aboutAir(read: readonly ReadBand[]): Warning[] {
+  const beyond = read.filter(({ extrapolated }) => extrapolated).map(({ band }) => band.label);
+  if (beyond.length === 0) return [];
+  return [
+    {
+      code: "air-range-extended",
+      message: `${beyond.join(", ")}: beyond 1690 nm Ciddor's dispersion formula is extrapolated (error about 1e-4 cm-1); give vacuum values where that matters`,
+    },
+  ];
+}

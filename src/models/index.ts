@@ -1,0 +1,2 @@
+export * from "./list.ts";
+export type * from "./model.ts";

@@ -1,0 +1,15 @@
+import type { Model } from "./model.ts";
+import { oscillator } from "./oscillator.ts";
+
+/** Every model, one line each; those that are not the default are imported only when asked for. */
+const models: Readonly<Record<string, () => Promise<Model> | Model>> = {
+  oscillator: () => oscillator,
+};
+
+/** Names a user may give to `--model`. */
+export const modelNames: readonly string[] = Object.keys(models);
+
+/** The model of that name, or null. */
+export async function findModel(name: string): Promise<Model | null> {
+  return Object.hasOwn(models, name) ? await models[name]!() : null;
+}
