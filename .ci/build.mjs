@@ -31,6 +31,7 @@ await build({
   keepNames: false,
   legalComments: "none",
   chunkNames: "parts/[name]-[hash]",
+  banner: { js: 'import{createRequire as bundledRequire}from"node:module";const require=bundledRequire(import.meta.url);' },
   external: ["@napi-rs/canvas"],
   plugins: [canvasStandIn],
 });

@@ -87,11 +87,11 @@ function correlationOf(
 }
 
 function qualityOf(solution: Solution): Quality {
-  const { stated, fit, sigmaKnown, used, excess, probability, leftOut } = solution;
+  const { stated, fit, sigmaKnown, used, excess, probability, treated } = solution;
   const dof = stated.degreesOfFreedom;
   const squares = fit.residuals.reduce((sum, r) => sum + r * r, 0);
   const constants = stated.keys.length - Object.values(solution.options.fixed).filter((f) => f.sigma === null).length;
-  const errors = leftOut.filter((e) => e !== null);
+  const errors = treated.leftOut.filter((e) => e !== null);
   return {
     bands: used.length,
     degreesOfFreedom: dof,
@@ -108,7 +108,7 @@ function qualityOf(solution: Solution): Quality {
   };
 }
 
-function bandResults({ series, model, options, used, fit, tests, leftOut }: Solution): BandResult[] {
+function bandResults({ series, model, options, used, fit, tests, treated }: Solution): BandResult[] {
   const { calculated } = model.prepare(series.bands, options).evaluate(fit.values);
   return series.bands.map((band, i) => {
     const at = used.indexOf(band);
@@ -120,8 +120,8 @@ function bandResults({ series, model, options, used, fit, tests, leftOut }: Solu
       residual: band.position - calculated[i]!,
       standardUncertainty: band.sigma,
       studentizedResidual: of(tests.studentized),
-      leverage: of(fit.leverage),
-      leftOutResidual: of(leftOut),
+      leverage: of(treated.leverage),
+      leftOutResidual: of(treated.leftOut),
       used: band.use,
       asRead: band.asRead,
       note: band.note,
@@ -132,7 +132,7 @@ function bandResults({ series, model, options, used, fit, tests, leftOut }: Solu
 }
 
 function predictionsOf(
-  { model, options, used, fit, by, leftOut }: Solution,
+  { model, options, used, fit, by, treated }: Solution,
   well: Well,
   top: number,
 ): { predictions: Prediction[]; warnings: Warning[] } {
@@ -140,7 +140,7 @@ function predictionsOf(
   const wanted = options.upTo ?? top + LEVELS_BEYOND;
   const upTo = highest === null ? wanted : Math.min(wanted, highest);
   const topBand = used.findIndex((band) => model.levels(band.label).upper === top);
-  const miss = leftOut[topBand] ?? null;
+  const miss = treated.leftOut[topBand] ?? null;
   const predictions = predict(
     model,
     options,

@@ -7,6 +7,7 @@ import {
   fitLinear,
   fitWithScatter,
   type LinearFit,
+  type Prepared,
   type Problem,
   type Treatment,
   UNTREATED,
@@ -40,7 +41,8 @@ export interface Solution {
   };
   /** probability of a larger χ² by chance; null without σ or degrees of freedom */
   readonly probability: number | null;
-  readonly leftOut: readonly (number | null)[];
+  /** residual tests of `fit` */
+  readonly treated: Diagnostics;
   readonly by: Propagation;
 }
 
@@ -73,7 +75,7 @@ export function solve(series: Series, model: Model, options: AnalysisOptions): S
     treatment: excess.treatment,
     excess: { kind: excess.kind, value: excess.value, applied: excess.applied },
     probability,
-    leftOut: excess.fit === stated ? tests.leftOut : diagnose(excess.fit, groups).leftOut,
+    treated: excess.fit === stated ? tests : diagnose(excess.fit, groups),
     by: {
       covariance: excess.fit.covariance,
       degreesOfFreedom: estimated ? dof : null,
@@ -96,13 +98,21 @@ export function trySolve(series: Series, model: Model, options: AnalysisOptions)
 export function fitSome(solution: Solution, bands: readonly Band[]): LinearFit | null {
   const { model, options, series, treatment, sigmaKnown } = solution;
   const errors = errorModelOf(series, bands, model);
-  const problem = { ...model.prepare(bands, options), observed: bands.map((band) => band.position) };
+  const prepared = model.prepare(bands, options);
+  // Too few bands are seen beforehand: an exception costs more than a fit.
+  if (new Set(bands.map((band) => band.label)).size < freeConstants(prepared)) return null;
+  const problem = { ...prepared, observed: bands.map((band) => band.position) };
   try {
     return fitLinear({ ...problem, errors: sigmaKnown ? errors : { ...errors, sigmas: null } }, treatment);
   } catch (error) {
     if (error instanceof UndeterminedError) return null;
     throw error;
   }
+}
+
+/** How many constants the bands must determine: neither held nor observed by a prior. */
+function freeConstants({ parameters }: Prepared): number {
+  return parameters.filter((p) => p.held === undefined && p.prior === undefined).length;
 }
 
 function determined(series: Series, used: readonly Band[], problem: Problem): LinearFit {

@@ -38,18 +38,17 @@ const POSITION = "write a value such as 2885.9 or 2885.98(2)";
 /** Read and convert a position; what is wrong comes back as Wrong. */
 export function placePosition(text: string, { unit, medium, air }: Footing): Placed | Wrong {
   const read = readMeasurement(text);
-  if (!read.ok) return { code: "position", what: read.what, mend: read.mend };
+  if (!read.ok) return { code: "position", what: read.what, mend: unitInside(text) ?? read.mend };
   if (!(read.value > 0))
     return { code: "position-not-positive", what: `"${text}" is not a positive position`, mend: POSITION };
   const inAir = medium === "air" && isWavelength(unit);
-  const nm = isWavelength(unit) ? 1e7 / toWavenumber(read.value, unit) : null;
-  if (inAir && airRange(nm! * 1.0003) === "refused")
+  const wavenumber = guarded(() => toWavenumber(read.value, unit, medium, air));
+  if (wavenumber === null)
     return {
       code: "air-below-230-nm",
       what: `${text} ${unit} in air lies below 230 nm, where the dispersion of air is not known`,
       mend: "give the vacuum wavelength or the wavenumber",
     };
-  const wavenumber = toWavenumber(read.value, unit, medium, air);
   return {
     wavenumber,
     stated: read.sigma === null ? null : { value: read.sigma, expanded: !text.includes("(") },
@@ -57,14 +56,31 @@ export function placePosition(text: string, { unit, medium, air }: Footing): Pla
   };
 }
 
+/** The mend for a value that is one but for the unit inside. */
+function unitInside(text: string): string | null {
+  const { number, unit } = splitUnit(text);
+  return unit !== null && readMeasurement(number).ok ? `write ${number}, and ${unit} in the column unit` : null;
+}
+
+/** null where the index of air is not known; toWavenumber says so by a RangeError. */
+function guarded(work: () => number): number | null {
+  try {
+    return work();
+  } catch (error) {
+    if (error instanceof RangeError) return null;
+    throw error;
+  }
+}
+
 /** An uncertainty as typed, `0.05` or `0.1 nm`: its number and its own unit if it has one. */
 export function readUncertainty(text: string): { value: number; unit: UnitName | null } | Wrong {
-  const { number, unit } = splitUnit(text);
+  const { number, unit } = splitUnit(text.replace(/^\s*(?:±|\+\/?-)\s*/, ""));
   const read = readMeasurement(number);
   const mend = "write a positive number such as 0.05, or with its unit, 0.1 nm";
   if (!read.ok) return { code: "sigma", what: `the uncertainty ${read.what}`, mend };
   if (!(read.value > 0))
     return { code: "sigma-not-positive", what: `an uncertainty of ${number} is not positive`, mend };
+  if (read.sigma !== null) return { code: "sigma", what: `the uncertainty ${number} carries one itself`, mend };
   return { value: read.value, unit };
 }
 

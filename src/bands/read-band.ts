@@ -1,5 +1,5 @@
 import type { Fault } from "../messages/index.ts";
-import { readMeasurement } from "../quantity/index.ts";
+import { isWavelength, readMeasurement } from "../quantity/index.ts";
 import type { Bond } from "../species/index.ts";
 import { bondFrom, type Context, isWrong, mediumFrom, unitFrom } from "./context.ts";
 import { type Footing, type Placed, placePosition, rate, readUncertainty, type Wrong } from "./conversion.ts";
@@ -38,10 +38,18 @@ export function readBand(
   };
 
   const unit = read("unit", unitFrom) ?? context.unit;
-  const footing: Footing = { unit, medium: read("medium", mediumFrom) ?? context.medium, air: context.air };
-  const label = labelOf(cells);
-  if (label === "")
-    wrong("band", { code: "no-label", what: "has no label", mend: 'write one such as 1-0 in the column "band"' });
+  const ownMedium = read("medium", mediumFrom);
+  // air asked for all bands matters to wavelengths only; a row that says so of another unit contradicts itself
+  if (ownMedium === "air" && !isWavelength(unit))
+    wrong("medium", {
+      code: "air-without-wavelength",
+      what: `air stands beside a position in ${unit}, which is the same in air and vacuum`,
+      mend: "write unit nm if it is a wavelength, or medium vacuum",
+    });
+  const medium = isWavelength(unit) ? (ownMedium ?? context.medium) : "vacuum";
+  // uncertainties may be in nm beside a position in cm-1: those keep the medium asked for
+  const footing: Footing = { unit, medium: ownMedium ?? context.medium, air: context.air };
+  const label = labelOf(cells, wrong);
   const position: Placed | null =
     cells.position === undefined
       ? wrong("position", { code: "no-position", what: "has no position", mend: "write a value such as 2885.98" })
@@ -76,15 +84,27 @@ export function readBand(
       ratio,
       note: cells.note ?? null,
       place,
-      asRead: { text: cells.position!, unit, medium: footing.medium, sigmaText: sigma?.text ?? null },
+      asRead: { text: cells.position!, unit, medium, sigmaText: sigma?.text ?? null },
     },
   };
 }
 
-function labelOf(cells: RawRow["cells"]): string {
-  if (cells.band !== undefined) return canonicalLabel(cells.band);
-  if (cells.upper === undefined || cells.lower === undefined) return "";
-  return canonicalLabel(`${cells.upper}-${cells.lower}`);
+function labelOf({ band, upper, lower }: RawRow["cells"], wrong: (column: ColumnName, wrong: Wrong) => null): string {
+  const whole = band === undefined ? null : canonicalLabel(band);
+  const made = upper === undefined || lower === undefined ? null : canonicalLabel(`${upper}-${lower}`);
+  if (whole !== null && made !== null && whole !== made)
+    wrong("band", {
+      code: "labels-differ",
+      what: `"${band}" and the levels ${upper} and ${lower} differ`,
+      mend: "give the label once",
+    });
+  if (whole === null && made === null) {
+    const missing = upper === undefined ? "upper" : "lower";
+    if (upper === lower)
+      wrong("band", { code: "no-label", what: "has no label", mend: 'write one such as 1-0 in the column "band"' });
+    else wrong(missing, { code: "no-label", what: `has no ${missing} level`, mend: "write both levels, such as 1 and 0" });
+  }
+  return whole ?? made ?? "";
 }
 
 /** Standard uncertainty in cm-1: written beside the position, else in its own column, else from the settings. */
@@ -111,6 +131,12 @@ function sigmaOf(
     if (isWrong(sigma)) return wrong("sigma", sigma);
     const unit = cells.sigma_unit === undefined ? sigma.unit : unitFrom(cells.sigma_unit);
     if (isWrong(unit)) return wrong("sigma_unit", unit);
+    if (sigma.unit !== null && sigma.unit !== unit)
+      return wrong("sigma_unit", {
+        code: "sigma-units-differ",
+        what: `the uncertainty is in ${sigma.unit} and in ${unit}`,
+        mend: "give its unit once",
+      });
     const text = cells.sigma_unit === undefined ? cells.sigma : `${cells.sigma} ${cells.sigma_unit}`;
     return { value: inWavenumbers(sigma.value, unit ?? undefined) * context.meaning, text };
   }

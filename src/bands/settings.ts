@@ -39,7 +39,14 @@ export const settingNames: readonly string[] = [
   "up-to",
 ];
 
-/** Flags beat the file. */
+/** Settings that say the same thing in two ways: one as a flag beats the other in the file. */
+const ALTERNATIVES = [
+  ["bond", "reduced-mass"],
+  ["series", "bands"],
+];
+
+/** Flags beat the file, also where they say the same thing in another way (`--reduced-mass` beats `bond` in a file). */
 export function mergeSettings(flags: Settings, file: Settings): Settings {
-  return new Map([...file, ...flags]);
+  const beaten = ALTERNATIVES.filter((names) => names.some((name) => flags.has(name))).flat();
+  return new Map([...[...file].filter(([name]) => !beaten.includes(name)), ...flags]);
 }

@@ -14,6 +14,8 @@ export interface Diagnostics {
   readonly studentized: readonly (number | null)[];
   /** observed - predicted from the data outside the datum's group (given the errors they share); null where that is undetermined */
   readonly leftOut: readonly (number | null)[];
+  /** diagonal of X·C·Xᵀ·V⁻¹: how much each datum determines its own calculated value; independent of the order of rows */
+  readonly leverage: readonly number[];
 }
 
 /** Residual tests; `groups` lists the data that leave together (repeats of one band). */
@@ -24,8 +26,8 @@ export function diagnose(fit: LinearFit, groups: readonly (readonly number[])[])
   const weightedResiduals = Float64Array.from(fit.residuals);
   whiten(fit.whitening, weightedResiduals);
   whitenTransposed(fit.whitening, weightedResiduals);
-  const q = (i: number, j: number) =>
-    inverse(i, j) - weighted[i]!.reduce((sum, x, k) => sum + x * dot(fit.gram[k]!, weighted[j]!), 0);
+  const pulled = weighted.map((row) => fit.gram.map((g) => dot(g, row)));
+  const q = (i: number, j: number) => inverse(i, j) - dot(weighted[i]!, pulled[j]!);
   const free = (i: number) => q(i, i) > NOTHING_LEFT * inverse(i, i);
 
   const studentized = fit.residuals.map((_, i) => {
@@ -40,7 +42,7 @@ export function diagnose(fit: LinearFit, groups: readonly (readonly number[])[])
       leftOut[i] = errors === null ? null : errors[m]!;
     });
   }
-  return { studentized, leftOut };
+  return { studentized, leftOut, leverage: fit.jacobian.map((row, i) => dot(row, pulled[i]!)) };
 }
 
 /** From a residual over the deviation of one datum (σ counted 1) to the externally studentised one. */

@@ -64,7 +64,6 @@ export function fitLinear(problem: Problem, treatment: Treatment = UNTREATED): L
     degreesOfFreedom,
     chiSquare: triangle.sumOfSquares,
     residuals: observed.map((y, i) => y - dot(jacobian[i]!, values)),
-    leverage: leverages(jacobian, gram, white),
     converged: true,
     reason: "linear in its constants: solved directly by QR",
     iterations: 1,
@@ -130,6 +129,8 @@ function spread(matrix: number[][], free: readonly number[], size: number): numb
 
 /** V⁻¹·X, column by column. */
 export function weightedJacobian(jacobian: readonly (readonly number[])[], white: Whitening): number[][] {
+  const { diagonal } = white;
+  if (diagonal !== null) return jacobian.map((row, i) => row.map((x) => x * diagonal[i]! * diagonal[i]!));
   const columns = jacobian[0]?.length ?? 0;
   const weighted = jacobian.map(() => new Array<number>(columns));
   for (let k = 0; k < columns; k++) {
@@ -141,16 +142,6 @@ export function weightedJacobian(jacobian: readonly (readonly number[])[], white
     });
   }
   return weighted;
-}
-
-/** Diagonal of X·C·Xᵀ·V⁻¹: how much each datum determines its own calculated value; independent of the order of rows. */
-function leverages(
-  jacobian: readonly (readonly number[])[],
-  gram: readonly (readonly number[])[],
-  white: Whitening,
-): number[] {
-  const weighted = weightedJacobian(jacobian, white);
-  return jacobian.map((row, i) => row.reduce((sum, x, k) => sum + x * dot(gram[k]!, weighted[i]!), 0));
 }
 
 /** Add what a fully correlated error of the data does to the constants: (C·Xᵀ·V⁻¹·c)(…)ᵀ. */

@@ -58,7 +58,6 @@ export interface FitResult {
   readonly chiSquare: number;
   /** observed - calculated, priors not included */
   readonly residuals: readonly number[];
-  readonly leverage: readonly number[];
   readonly converged: boolean;
   readonly reason: string;
   readonly iterations: number;

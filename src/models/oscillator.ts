@@ -39,29 +39,39 @@ function levels(label: string): { upper: number; lower: number } {
   return read;
 }
 
-/** Derivatives of G(v) = Σ ±Y·(v+½)^k with respect to the constants. */
-function powers(v: number, terms: number, derivative = 0): number[] {
+/** ±(v+½)^k, k = 1 … terms, or its derivative of that order by v: the derivatives of G(v) with respect to the constants. */
+function powers(v: number, terms: number, order = 0): number[] {
   const x = v + 0.5;
-  return Array.from({ length: terms }, (_, k) => {
-    let factor = sign(k);
-    for (let d = 0; d < derivative; d++) factor *= k + 1 - d;
-    return factor === 0 ? 0 : factor * x ** (k + 1 - derivative);
-  });
+  const row = new Array<number>(terms);
+  let power = 1;
+  for (let k = 0; k < terms; k++) {
+    const exponent = k + 1 - order;
+    if (exponent > 0) power *= x;
+    row[k] = exponent < 0 ? 0 : sign(k) * falling(k + 1, order) * (exponent === 0 ? 1 : power);
+  }
+  return row;
+}
+
+/** n·(n-1)·…, `order` factors. */
+function falling(n: number, order: number): number {
+  let product = 1;
+  for (let d = 0; d < order; d++) product *= n - d;
+  return product;
 }
 
 function well(p: readonly number[]): Well {
   const terms = p.length;
-  const sum = (derivative: number) => (v: number) => {
-    const x = v + 0.5;
-    let total = 0;
-    for (let k = terms - 1; k >= 0; k--) {
-      const power = k + 1 - derivative;
-      if (power < 0) continue;
-      let factor = sign(k) * p[k]!;
-      for (let d = 0; d < derivative; d++) factor *= k + 1 - d;
-      total += factor * x ** power;
-    }
-    return total;
+  /** Coefficients of rising powers of v + ½, of G and of its derivatives. */
+  const polynomials = [[0, ...p.map((constant, k) => sign(k) * constant)]];
+  for (let order = 1; order <= 2; order++)
+    polynomials.push(polynomials[order - 1]!.slice(1).map((coefficient, k) => coefficient * (k + 1)));
+  const sum = (order: number) => {
+    const coefficients = polynomials[order]!;
+    return (v: number) => {
+      let total = 0;
+      for (let k = coefficients.length - 1; k >= 0; k--) total = total * (v + 0.5) + coefficients[k]!;
+      return total;
+    };
   };
   return {
     term: sum(0),
@@ -94,8 +104,10 @@ export const oscillator: Model = {
     const all = parameters(options);
     const jacobian = transitions.map(({ label }) => {
       const { upper, lower } = levels(label);
+      const row = powers(upper, all.length);
       const low = powers(lower, all.length);
-      return powers(upper, all.length).map((x, k) => x - low[k]!);
+      for (let k = 0; k < row.length; k++) row[k]! -= low[k]!;
+      return row;
     });
     return {
       parameters: all,

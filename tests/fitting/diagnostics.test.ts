@@ -75,6 +75,7 @@ describe("residual tests", () => {
       // rounding of a different order of sums
       expect(Math.abs(b.studentized[at]! - a.studentized[i]!)).toBeLessThan(1e-7);
       expect(Math.abs(b.leftOut[at]! - a.leftOut[i]!)).toBeLessThan(1e-7);
+      expect(Math.abs(b.leverage[at]! - a.leverage[i]!)).toBeLessThan(1e-9);
     });
   });
 

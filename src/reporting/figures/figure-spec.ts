@@ -12,12 +12,14 @@ export interface Axis {
   /** places of the ticks; labels carry `decimals` digits after the point, minus U+2212, no thousands separator */
   readonly ticks: readonly number[];
   readonly decimals: number;
-  /** an own text for each tick in place of the number */
+  /** an own text for each tick in place of the number; all empty: ticks without labels, as between panels that share an axis */
   readonly tickLabels?: readonly string[];
   readonly reversed?: boolean;
 }
 
 export type Marker = "circle" | "square" | "triangle" | "diamond" | "cross" | "plus";
+
+export type Side = "above" | "below" | "left" | "right";
 
 export interface Point {
   readonly x: number;
@@ -27,8 +29,11 @@ export interface Point {
   readonly xError?: number;
   /** text beside the point, kept clear of other marks by the builder */
   readonly text?: readonly Run[];
+  /** where that text stands; default above */
+  readonly textSide?: Side;
 }
 
+/** Later traces lie over earlier ones; traces of one name share one entry of the legend, null has none. */
 export type Trace =
   | {
       readonly kind: "points";
@@ -75,8 +80,10 @@ export interface Panel {
     readonly align: "left" | "center" | "right";
     readonly baseline: "top" | "middle" | "bottom";
   }[];
-  readonly legend: "top-left" | "top-right" | "bottom-left" | "bottom-right" | null;
+  readonly legend: Corner | null;
 }
+
+export type Corner = "top-left" | "top-right" | "bottom-left" | "bottom-right";
 
 /** A picture as plain data; the renderer only draws it. Panels stand one below the other and share nothing but the width. */
 export interface FigureSpec {

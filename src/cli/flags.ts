@@ -1,0 +1,116 @@
+/** An option of the command line: declared here, read by the commands. */
+export interface Flag {
+  /** long name without dashes; the setting of that name */
+  readonly name: string;
+  readonly short?: string;
+  /** placeholder of the value, or null for a switch */
+  readonly value: string | null;
+  readonly help: string;
+}
+
+/** How bands come in. */
+export const bandFlags: readonly Flag[] = [
+  {
+    name: "series",
+    value: '"P1 P2 …"',
+    help: "consecutive overtones 1-0, 2-0, 3-0 …, split by spaces, commas or semicolons",
+  },
+  { name: "from", value: "V", help: "upper level of the first position of --series (default 1)" },
+  {
+    name: "bands",
+    value: '"1-0 P, …"',
+    help: 'labelled bands, such as "1-0 2885.98(2), 3-0 970.056 nm, 2-1 2782.0"; hot bands and spacings are just labels',
+  },
+  {
+    name: "spacings",
+    value: "KIND",
+    help: "spacings (v+1 - v) were measured, or subtracted from measured positions (default measured)",
+  },
+  {
+    name: "unit",
+    value: "UNIT",
+    help: "of positions: cm-1, nm, um, Hz, GHz, THz, meV, eV, kJ/mol, kcal/mol (default cm-1)",
+  },
+  { name: "medium", value: "MEDIUM", help: "of wavelengths: vacuum or air (default vacuum)" },
+  { name: "air", value: '"T, P"', help: 'air other than standard air (15 °C, 101325 Pa), such as "25 C, 98 kPa"' },
+  {
+    name: "sigma",
+    value: "U",
+    help: "standard uncertainty of bands that carry none, in the unit of the bands or with its own, such as 0.1 nm",
+  },
+  {
+    name: "sigma-means",
+    value: "KIND",
+    help: "what stated uncertainties are: standard, 2sigma, 95 or halfwidth (default standard)",
+  },
+  {
+    name: "shared-sigma",
+    value: "U",
+    help: "calibration offset common to all bands, fully correlated, such as 0.02 or 0.01 nm",
+  },
+  { name: "phase", value: "TEXT", help: "phase of the sample, kept with the bands" },
+  { name: "format", value: "KIND", help: "of FILE: csv, tsv or toml (default by its name; csv for standard input)" },
+];
+
+/** What the bands belong to. */
+export const moleculeFlags: readonly Flag[] = [
+  { name: "bond", value: '"1H 35Cl"', help: "two isotopes (also H, D, T); gives force constant and Morse a" },
+  { name: "reduced-mass", value: "U", help: "reduced mass in u, in place of --bond" },
+  { name: "name", value: "TEXT", help: "what the output calls the oscillator" },
+  { name: "be", value: "B", help: "rotational constant Be in cm-1, for Y00" },
+  { name: "alpha-e", value: "A", help: "vibration-rotation constant αe in cm-1, for Y00" },
+  { name: "re", value: "R", help: "bond length re in Å, in place of --be (with a bond)" },
+];
+
+/** How the fit is made. */
+export const fitFlags: readonly Flag[] = [
+  { name: "model", value: "NAME", help: "oscillator (default)" },
+  { name: "terms", value: "N", help: "number of constants, 2 to 6 (default 2: a Morse oscillator)" },
+  {
+    name: "fix",
+    value: '"weye=0.22"',
+    help: "hold constants; with an uncertainty, weye=0.22(1), it is one more observation",
+  },
+  {
+    name: "excess",
+    value: "KIND",
+    help: "residuals larger than σ: add a scatter, multiply σ (birge), or none (default scatter)",
+  },
+  { name: "scatter", value: "U", help: "added scatter in cm-1, given instead of estimated" },
+  { name: "coverage", value: "P", help: "another level of intervals beside 0.95, such as 0.99" },
+  { name: "up-to", value: "V", help: "highest level to predict (default three beyond the last band)" },
+  {
+    name: "notation",
+    value: "KIND",
+    help: "equilibrium (ωe, ωexe) or local (ω̃, ω̃x) in text and figures (default equilibrium)",
+  },
+];
+
+/** Every command has these. */
+export const commonFlags: readonly Flag[] = [
+  { name: "json", value: null, help: "print one JSON document" },
+  { name: "quiet", short: "q", value: null, help: "fewer messages" },
+  { name: "no-color", value: null, help: "plain text (also by NO_COLOR)" },
+  { name: "debug", value: null, help: "show a trace when something fails inside" },
+];
+
+export const reportFlags: readonly Flag[] = [
+  { name: "out", short: "o", value: "DIR", help: "folder to write (required); made anew" },
+  { name: "force", short: "f", value: null, help: "replace an existing report in DIR" },
+  { name: "width", value: "MM", help: "width of the figures: 85 or 171 (default 85)" },
+];
+
+export const predictFlags: readonly Flag[] = [
+  {
+    name: "constants",
+    value: '"we=… wexe=…"',
+    help: "constants in place of bands, such as we=2990.95(1) wexe=52.82(1)",
+  },
+  { name: "hot", value: "V", help: "also bands that start from levels up to V (default 0)" },
+];
+
+export const convertFlags: readonly Flag[] = [
+  { name: "to", value: "UNIT", help: "unit wanted (required)" },
+  { name: "to-medium", value: "MEDIUM", help: "of wavelengths wanted: vacuum or air (default vacuum)" },
+  ...bandFlags.filter(({ name }) => ["unit", "medium", "air", "sigma"].includes(name)),
+];

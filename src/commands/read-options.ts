@@ -1,0 +1,155 @@
+import type { AnalysisOptions, ExcessKind } from "../analysis/index.ts";
+import type { Setting, Settings } from "../bands/index.ts";
+import { type Fault, nearest } from "../messages/index.ts";
+import { type Fixed, findModel, type Model, modelNames, type Notation } from "../models/index.ts";
+import { type AirConditions, readAir, readMeasurement, standardAir } from "../quantity/index.ts";
+
+/** The settings about the fit, read and checked. */
+export interface ReadOptions {
+  readonly model: Model;
+  readonly analysis: AnalysisOptions;
+  readonly notation: Notation;
+  /** how text writes each constant, in that notation */
+  readonly symbols: Readonly<Record<string, string>>;
+}
+
+/** Reads settings one by one and collects what is wrong with them. */
+class Reader {
+  readonly faults: Fault[] = [];
+  readonly settings: Settings;
+
+  constructor(settings: Settings) {
+    this.settings = settings;
+  }
+
+  fault(setting: Setting, code: string, what: string, mend: string): null {
+    this.faults.push({ code, place: setting.place, what, mend });
+    return null;
+  }
+
+  number(name: string, accept: (x: number) => boolean, mend: string): number | null {
+    const setting = this.settings.get(name);
+    if (setting === undefined) return null;
+    const read = readMeasurement(setting.value);
+    if (!read.ok) return this.fault(setting, "not-a-number", read.what, mend);
+    return accept(read.value)
+      ? read.value
+      : this.fault(setting, "out-of-range", `${setting.value} is not possible`, mend);
+  }
+
+  choice<T extends string>(name: string, choices: readonly T[], otherwise: T): T {
+    const setting = this.settings.get(name);
+    if (setting === undefined) return otherwise;
+    const found = choices.find((choice) => choice === setting.value.trim().toLowerCase());
+    if (found === undefined)
+      this.fault(setting, "unknown-choice", `"${setting.value}" is not known`, `write ${choices.join(" or ")}`);
+    return found ?? otherwise;
+  }
+}
+
+const whole = (least: number, most: number) => (x: number) => Number.isInteger(x) && x >= least && x <= most;
+const positive = (x: number) => x > 0;
+
+/** Read everything about the fit; what is wrong comes back as faults, with null. */
+export async function readOptions(
+  settings: Settings,
+): Promise<{ options: ReadOptions | null; faults: readonly Fault[] }> {
+  const reader = new Reader(settings);
+  const model = await readModel(reader);
+  const autoTerms = settings.get("terms")?.value.trim().toLowerCase() === "auto";
+  const terms =
+    model?.terms == null || autoTerms
+      ? null
+      : reader.number(
+          "terms",
+          whole(model.terms.least, model.terms.most),
+          `write a whole number from ${model.terms.least} to ${model.terms.most}, or auto`,
+        );
+  const analysis: AnalysisOptions = {
+    terms,
+    autoTerms,
+    fixed: model === null ? {} : readFixed(reader, model),
+    excess: reader.choice<ExcessKind>("excess", ["scatter", "birge", "none"], "scatter"),
+    scatter: reader.number("scatter", positive, "write the added scatter in cm-1, such as 0.3"),
+    coverage: reader.number("coverage", (x) => x > 0 && x < 1, "write a probability between 0 and 1, such as 0.99"),
+    upTo: reader.number("up-to", whole(1, 500), "write the highest level to predict, such as 9"),
+    air: readAirConditions(reader),
+    be: reader.number("be", positive, "write Be in cm-1, such as 10.593"),
+    alphaE: reader.number("alpha-e", Number.isFinite, "write αe in cm-1, such as 0.307"),
+    re: reader.number("re", positive, "write re in Å, such as 1.2746"),
+  };
+  const notation = reader.choice<Notation>("notation", ["equilibrium", "local"], "equilibrium");
+  if (model === null || reader.faults.length > 0) return { options: null, faults: reader.faults };
+  return { options: { model, analysis, notation, symbols: symbolsOf(model, notation) }, faults: [] };
+}
+
+/** How text writes the constants of a model. */
+export function symbolsOf(model: Model, notation: Notation): Record<string, string> {
+  return Object.fromEntries(model.constants.map(({ key, symbol }) => [key, symbol[notation]]));
+}
+
+async function readModel(reader: Reader): Promise<Model | null> {
+  const setting = reader.settings.get("model");
+  const name = setting?.value.trim().toLowerCase() ?? "oscillator";
+  const model = await findModel(name);
+  if (model === null && setting !== undefined) {
+    const guess = nearest(name, modelNames);
+    reader.fault(
+      setting,
+      "unknown-model",
+      `there is no model "${setting.value}"${guess === null ? "" : ` (did you mean ${guess}?)`}`,
+      `write ${modelNames.join(" or ")}`,
+    );
+  }
+  return model;
+}
+
+function readAirConditions(reader: Reader): AirConditions {
+  const setting = reader.settings.get("air");
+  if (setting === undefined) return standardAir;
+  const read = readAir(setting.value);
+  if (!("what" in read)) return read;
+  reader.fault(setting, "air-conditions", read.what, read.mend);
+  return standardAir;
+}
+
+/** `--fix "weye=0.22(1) weze=0"`: constants held, or with an uncertainty observed. */
+function readFixed(reader: Reader, model: Model): Readonly<Record<string, Fixed>> {
+  const setting = reader.settings.get("fix");
+  if (setting === undefined) return {};
+  const fixed: Record<string, Fixed> = {};
+  for (const { key, value } of readAssignments(setting.value)) {
+    const keys = model.constants.map((constant) => constant.key);
+    const read = readMeasurement(value ?? "");
+    if (!keys.includes(key))
+      reader.fault(
+        setting,
+        "unknown-constant",
+        `there is no constant "${key}"`,
+        `write one of ${keys.join(", ")}, such as weye=0.22`,
+      );
+    else if (value === null || !read.ok)
+      reader.fault(
+        setting,
+        "not-a-number",
+        `"${key}" has no number`,
+        `write ${key}=0.22, or ${key}=0.22(1) with its uncertainty`,
+      );
+    else if (Object.hasOwn(fixed, key))
+      reader.fault(setting, "constant-twice", `"${key}" stands there twice`, "name each constant once");
+    else fixed[key] = { value: read.value, sigma: read.sigma };
+  }
+  return fixed;
+}
+
+/** `we=2990.9(1) wexe = 52.8` as pairs; commas and semicolons may stand between them. A word without `=` has the value null. */
+export function readAssignments(text: string): { key: string; value: string | null }[] {
+  return text
+    .replace(/\s*=\s*/g, "=")
+    .split(/[\s,;]+/)
+    .filter((word) => word !== "")
+    .map((word) => {
+      const at = word.indexOf("=");
+      return at < 0 ? { key: word, value: null } : { key: word.slice(0, at), value: word.slice(at + 1) };
+    });
+}

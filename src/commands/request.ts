@@ -1,0 +1,76 @@
+import type { Setting, Settings } from "../bands/index.ts";
+
+/** The text of a band file. `source` is what messages call it. */
+export interface InputText {
+  readonly text: string;
+  readonly source: string;
+  readonly format: "csv" | "tsv" | "toml";
+}
+
+/** A setting as a program may give it; text is read exactly as on the command line. */
+type Word = string | number;
+
+/** What `fit` and its relatives may be told: the flags of the command in camel case, and the text of a file. Flags beat the file. */
+export interface FitRequest {
+  readonly input?: InputText;
+  /** consecutive overtones 1-0, 2-0 …, such as "2885.98 5667.98 8346.78" */
+  readonly series?: string;
+  /** upper level of the first of `series`; @default 1 */
+  readonly from?: Word;
+  /** labelled bands, such as "1-0 2885.98(2), 3-0 8346.78(5), 2-1 2782.0" */
+  readonly bands?: string;
+  /** @default "measured" */
+  readonly spacings?: "measured" | "subtracted";
+  /** @default "cm-1" */
+  readonly unit?: string;
+  /** @default "vacuum" */
+  readonly medium?: "vacuum" | "air";
+  /** other than standard air, such as "25 C, 98 kPa" */
+  readonly air?: string;
+  /** standard uncertainty of bands that carry none */
+  readonly sigma?: Word;
+  /** @default "standard" */
+  readonly sigmaMeans?: string;
+  /** a calibration offset common to all bands, fully correlated */
+  readonly sharedSigma?: Word;
+  readonly bond?: string;
+  /** u */
+  readonly reducedMass?: Word;
+  readonly name?: string;
+  /** @default "oscillator" */
+  readonly model?: string;
+  /** number of constants, 2 to 6; @default 2 */
+  readonly terms?: Word;
+  /** constants held, such as "weye=0.22"; with an uncertainty one more observation */
+  readonly fix?: string;
+  /** rotational constants in cm-1, bond length in Å */
+  readonly be?: Word;
+  readonly alphaE?: Word;
+  readonly re?: Word;
+  /** @default "scatter" */
+  readonly excess?: string;
+  /** a given scatter τ in cm-1 */
+  readonly scatter?: Word;
+  /** another level of intervals, such as 0.99 */
+  readonly coverage?: Word;
+  /** @default "equilibrium" */
+  readonly notation?: string;
+  /** highest level to predict; @default three beyond the last band */
+  readonly upTo?: Word;
+  /** phase of all bands */
+  readonly phase?: string;
+}
+
+/** From `sharedSigma` to `shared-sigma`. */
+export const flagName = (key: string) => key.replace(/[A-Z]/g, (letter) => `-${letter.toLowerCase()}`);
+
+/** The settings of a request as a file would hold them; their place is the flag. */
+export function requestSettings(request: object): Settings {
+  const settings = new Map<string, Setting>();
+  for (const [key, value] of Object.entries(request)) {
+    if (typeof value !== "string" && typeof value !== "number") continue;
+    const name = flagName(key);
+    settings.set(name, { value: String(value), place: { source: `--${name}` } });
+  }
+  return settings;
+}

@@ -1,0 +1,89 @@
+import type { FitDocument } from "../analysis/index.ts";
+import { type CsvCell, csvText } from "./csv-text.ts";
+
+/** Who wrote a file, from which bytes; no colon, so that it is no setting when the file is read again. */
+function origin({ tool, input }: FitDocument): string {
+  const from = input === null ? "from a request without a file" : `from ${input.source} with sha256 ${input.sha256}`;
+  return `written by ${tool.name} ${tool.version} ${from.replaceAll(":", " ")}`;
+}
+
+/** Settings without which the bands of the file would be read otherwise, as `name: value`. */
+function settings({ series, request }: FitDocument): string[] {
+  const same = <T>(of: (s: FitDocument["series"][number]) => T): T | null => {
+    const [first, ...others] = series.map(of);
+    return first !== undefined && others.every((other) => other === first) ? first : null;
+  };
+  const bond = same((s) => s.bond);
+  const mass = same((s) => s.reducedMass);
+  const terms = same((s) => s.terms);
+  return [
+    ...(bond !== null && !bond.startsWith("reduced mass") ? [`bond: ${bond}`] : []),
+    ...(bond?.startsWith("reduced mass") && mass !== null ? [`reduced-mass: ${mass}`] : []),
+    ...(terms === null ? [] : [`terms: ${terms}`]),
+    ...(request.spacings === undefined ? [] : [`spacings: ${request.spacings}`]),
+  ];
+}
+
+/**
+ * Bands as used beside their calculated positions, in cm-1 and vacuum. The first eight columns and the settings above them
+ * are input again; the shared part of the uncertainty is not among them.
+ */
+export function bandsCsv(document: FitDocument): string {
+  const head = ["band", "position", "unit", "medium", "sigma", "series", "use", "note"];
+  const more = ["calculated", "residual", "studentized_residual", "leverage", "left_out_residual"];
+  const read = ["as_read", "as_read_sigma", "as_read_unit", "as_read_medium"];
+  const rows = document.series.flatMap(({ name, bands }) =>
+    bands.map((band): CsvCell[] => [
+      ...[band.label, band.observed, "cm-1", "vacuum", band.standardUncertainty, name, band.used, band.note],
+      ...[band.calculated, band.residual, band.studentizedResidual, band.leverage, band.leftOutResidual],
+      ...[band.asRead.text, band.asRead.sigmaText, band.asRead.unit, band.asRead.medium],
+    ]),
+  );
+  return csvText([origin(document), ...settings(document)], [...head, ...more, ...read], rows);
+}
+
+/** Constants with their covariance, one column `covariance_KEY` a constant (unit: product of both units). */
+export function constantsCsv(document: FitDocument): string {
+  const keys = [...new Set(document.series.flatMap(({ constants }) => Object.keys(constants)))];
+  const head = [
+    "series",
+    "constant",
+    "value",
+    "standard_uncertainty",
+    "interval95_low",
+    "interval95_high",
+    "unit",
+    "held",
+  ];
+  const rows = document.series.flatMap(({ name, constants, held, correlation, covariance }) =>
+    Object.entries(constants).map(([key, q]): CsvCell[] => {
+      const at = correlation?.order.indexOf(key) ?? -1;
+      const line = keys.map((other) => covariance?.[at]?.[correlation?.order.indexOf(other) ?? -1]);
+      const interval = [q.interval95?.[0], q.interval95?.[1]];
+      return [name, key, q.value, q.standardUncertainty, ...interval, q.unit, held.includes(key), ...line];
+    }),
+  );
+  return csvText([origin(document)], [...head, ...keys.map((key) => `covariance_${key}`)], rows);
+}
+
+/** Every predicted band, those observed too; positions in cm-1 and vacuum, wavelengths in nm. */
+export function predictionsCsv(document: FitDocument): string {
+  const head = [
+    "series",
+    "band",
+    "position",
+    "unit",
+    "medium",
+    "standard_uncertainty",
+    "interval95_low",
+    "interval95_high",
+  ];
+  const more = ["last_band_out", "vacuum_wavelength_nm", "air_wavelength_nm", "observed"];
+  const rows = document.series.flatMap(({ name, predictions }) =>
+    predictions.map(({ label, position: q, lastBandOut, vacuumWavelength, airWavelength, observed }): CsvCell[] => [
+      ...[name, label, q.value, "cm-1", "vacuum", q.standardUncertainty, q.interval95?.[0], q.interval95?.[1]],
+      ...[lastBandOut, vacuumWavelength, airWavelength, observed],
+    ]),
+  );
+  return csvText([origin(document)], [...head, ...more], rows);
+}

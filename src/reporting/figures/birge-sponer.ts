@@ -1,0 +1,170 @@
+import type { SeriesResult } from "../../analysis/index.ts";
+import { counted, modelPhrase, seriesPhrase } from "./captions.ts";
+import { compose, heightFor } from "./compose.ts";
+import type { FigureSpec, Point, Trace } from "./figure-spec.ts";
+import { levelsOf, observedSpacings } from "./levels.ts";
+import type { FigureOptions } from "./options.ts";
+import { extrapolatedDash, SIZE, seriesStyle } from "./style.ts";
+import { quotient, SYMBOL, UNIT } from "./symbols.ts";
+import { fittedWell, type Valued } from "./term-values.ts";
+import { shortened } from "./text-width.ts";
+import { paddedRange } from "./ticks.ts";
+
+/** Beyond this many times the observed range the line is not followed to zero. */
+const FARTHEST = 12;
+
+/** One series ready to be drawn: what was observed, and the line as a function of the abscissa. */
+interface Drawn {
+  readonly name: string;
+  readonly points: readonly (Point & { readonly filled: boolean })[];
+  readonly line: ((x: number) => Valued) | null;
+  /** abscissae: start of the line, end of what was observed, end of the extrapolation */
+  readonly from: number;
+  readonly observed: number;
+  readonly to: number;
+  readonly reachesZero: boolean;
+}
+
+/**
+ * The plot of Birge and Sponer (1926): spacings against v + ½ with the fitted line on to ΔG = 0; in local-mode notation ν̃/v
+ * against v. Points are made from the bands, the line from the constants: nothing is fitted here. null when no band can be shown.
+ */
+export function birgeSponerFigure(series: readonly SeriesResult[], options: FigureOptions): FigureSpec | null {
+  const overtones = series.map((one) => positionPlot(one));
+  const local = options.notation === "local" && overtones.some(({ points }) => points.length > 0);
+  const drawn = local ? overtones : series.map((one) => spacingPlot(one));
+  const points = drawn.flatMap((one) => one.points);
+  if (points.length === 0) return null;
+  const traces = drawn.flatMap((one, i) => tracesOf(one, i, drawn.length > 1));
+  const zero = drawn.some(({ reachesZero }) => reachesZero);
+  const heights = [
+    ...points.flatMap(({ y, yError = 0 }) => [y - yError, y + yError]),
+    ...traces.flatMap((trace) => (trace.kind === "line" ? trace.points.map(({ y }) => y) : [])),
+  ];
+  const padded = paddedRange(heights);
+  const right = Math.max(...drawn.map(({ to, observed }) => Math.max(to, observed)));
+  const y = local ? SYMBOL.wavenumberOverLevel : SYMBOL.spacing;
+  const unshown = points.some(({ filled }) => !filled);
+  return compose(
+    {
+      name: "birge-sponer",
+      widthMm: options.widthMm,
+      heightMm: heightFor(options.widthMm, 1),
+      caption: caption(series, options, local, unshown),
+      alt: alt(drawn, local),
+    },
+    [
+      {
+        tag: null,
+        weight: 1,
+        x: { label: local ? SYMBOL.level : SYMBOL.levelPlusHalf, range: [0, right * 1.03 + 0.2], least: 1 },
+        y: { label: quotient(y, UNIT.wavenumber), range: zero ? [0, padded[1]] : padded },
+        traces,
+        texts: [],
+        legend: drawn.length > 1,
+      },
+    ],
+  );
+}
+
+function spacingPlot(series: SeriesResult): Drawn {
+  const points = observedSpacings(series.bands).map(({ lower, upper, mean, standardUncertainty: u }) => ({
+    x: (lower + upper) / 2,
+    y: mean,
+    filled: upper - lower === 1,
+    ...(u === null ? {} : { yError: u }),
+  }));
+  const well = fittedWell(series);
+  const line = well === null ? null : (x: number) => well.difference(x + 0.5, x - 0.5);
+  const observed = Math.max(0.5, ...points.map(({ x }) => x));
+  const end = line === null ? { to: observed, reachesZero: false } : zeroOf((x) => line(x).value, observed);
+  return { name: series.name, points, line, from: 0, observed, ...end };
+}
+
+/** Where the line falls to zero past what was observed; otherwise where it stops falling, or a little further on. */
+function zeroOf(line: (x: number) => number, observed: number): { to: number; reachesZero: boolean } {
+  const step = 0.1;
+  const none = { to: observed * 1.3 + 0.5, reachesZero: false };
+  let before = line(observed);
+  if (before <= 0) return { to: observed, reachesZero: false };
+  for (let x = observed; x < FARTHEST * (observed + 0.5); x += step) {
+    const next = line(x + step);
+    if (next >= before) return x > observed + step ? { to: x, reachesZero: false } : none;
+    if (next <= 0) return { to: x + (step * before) / (before - next), reachesZero: true };
+    before = next;
+  }
+  return { to: 3 * observed, reachesZero: false };
+}
+
+function positionPlot(series: SeriesResult): Drawn {
+  const points = series.bands.flatMap(({ label, observed, standardUncertainty: u, used }) => {
+    const levels = levelsOf(label);
+    if (levels === null || levels.lower !== 0 || levels.upper === 0) return [];
+    const v = levels.upper;
+    return [{ x: v, y: observed / v, filled: used, ...(u === null ? {} : { yError: u / v }) }];
+  });
+  const well = fittedWell(series);
+  const line = well === null ? null : (x: number) => (x < 1e-6 ? well.slope(0) : well.difference(x, 0, x));
+  const observed = Math.max(1, ...points.map(({ x }) => x));
+  return { name: series.name, points, line, from: 0, observed, to: observed + 1, reachesZero: false };
+}
+
+const STEPS = 120;
+
+function tracesOf({ name, points, line, from, observed, to }: Drawn, index: number, named: boolean): Trace[] {
+  const { colour, marker, dashPt } = seriesStyle(index);
+  const label = named ? shortened(name, 90, SIZE.small) : null;
+  const traces: Trace[] = [];
+  if (line !== null) {
+    const sampled = (start: number, end: number) =>
+      Array.from({ length: STEPS + 1 }, (_, i) => start + ((end - start) * i) / STEPS).map((x) => ({ x, ...line(x) }));
+    const fitted = sampled(from, observed);
+    const beyond = to > observed ? sampled(observed, to) : [];
+    const band = [...fitted, ...beyond].flatMap(({ x, value, half }) =>
+      half === null ? [] : [{ x, low: value - half, high: value + half }],
+    );
+    const xy = (all: typeof fitted) => all.map(({ x, value }) => ({ x, y: value }));
+    if (band.length > 0) traces.push({ kind: "area", name: null, colour, opacity: 0.16, points: band });
+    traces.push({ kind: "line", name: label, colour, widthPt: SIZE.line, dashPt, points: xy(fitted) });
+    if (beyond.length > 0) {
+      const broken = extrapolatedDash(dashPt);
+      traces.push({ kind: "line", name: null, colour, widthPt: SIZE.thin, dashPt: broken, points: xy(beyond) });
+    }
+  }
+  for (const filled of [false, true]) {
+    const some = points.filter((point) => point.filled === filled).map(({ filled: _, ...point }) => point);
+    if (some.length === 0) continue;
+    const named = filled || points.every((point) => !point.filled) ? label : null;
+    traces.push({ kind: "points", name: named, colour, marker, filled, sizePt: SIZE.marker, points: some });
+  }
+  return traces;
+}
+
+function caption(series: readonly SeriesResult[], options: FigureOptions, local: boolean, hollow: boolean): string {
+  const what = local
+    ? "ν̃/v of the overtone bands v-0 against v"
+    : "Birge–Sponer plot: spacings ΔG(v + ½) between neighbouring observed levels against v + ½";
+  const known = series.some(({ bands }) => bands.some(({ standardUncertainty: u }) => u !== null));
+  const bars = known
+    ? "bars: standard uncertainties, propagated from those of the bands"
+    : "no uncertainties were stated";
+  const other = local ? "hollow: bands not used in the fit" : "hollow: mean spacing over levels that were not observed";
+  const band = series.some(({ covariance }) => covariance !== null) ? "; shaded: its 95 % confidence band" : "";
+  return [
+    `${what}, for ${seriesPhrase(series)}.`,
+    `Points: observed${hollow ? ` (${other})` : ""}; ${bars}.`,
+    `Line: ${modelPhrase(series, options)} fitted to the band positions themselves${band};`,
+    "thinner and more widely broken: extrapolated beyond the highest observed band.",
+  ].join(" ");
+}
+
+function alt(drawn: readonly Drawn[], local: boolean): string {
+  const kind = local
+    ? "Band positions divided by v, against v"
+    : "Spacings of neighbouring levels against v plus one half";
+  const each = drawn.map(({ name, points, reachesZero, to }) => {
+    const end = reachesZero ? `; the fitted line falls to zero at v + ½ = ${to.toFixed(1)}` : "";
+    return `${name}: ${counted(points.length, "point")}${end}`;
+  });
+  return `${kind}. ${each.join(". ")}.`;
+}

@@ -1,0 +1,110 @@
+import type { FitDocument, SeriesResult } from "../../analysis/index.ts";
+import type { Notation } from "../../models/index.ts";
+import { constantsSet } from "../../quantity/index.ts";
+import { isReference } from "../references.ts";
+import { type Symbols, symbolOf } from "../symbols.ts";
+import type { Citations } from "./citations.ts";
+import { sentence } from "./table.ts";
+
+/** What the methods paragraph is written from. */
+export interface Methods {
+  readonly document: FitDocument;
+  readonly notation: Notation;
+  readonly symbols: Symbols;
+  readonly citations: Citations;
+  /** keys of the works that describe the model */
+  readonly modelReferences: readonly string[];
+}
+
+const RAISED = ["", "", "²", "³", "⁴", "⁵", "⁶"];
+
+/** G(v) as a sum, from the symbols of the constants; only the second carries a minus. */
+function termValues(keys: readonly string[], symbols: Symbols): string {
+  const parts = keys.map(
+    (key, k) => `${k === 0 ? "" : k === 1 ? " − " : " + "}${symbolOf(symbols, key)}(v + ½)${RAISED[k + 1]}`,
+  );
+  return `G(v) = ${parts.join("")}`;
+}
+
+/** Equations and works that were really used, and nothing else. */
+export function methods({ document, notation, symbols, citations, modelReferences }: Methods): string {
+  const { series, request } = document;
+  const { cite } = citations;
+  const any = (test: (one: SeriesResult) => boolean) => series.some(test);
+  const row = (method: string) =>
+    any(({ dissociation }) => dissociation.some((r) => r.method === method && r.d0 !== null));
+  const longest = series.reduce<string[]>((keys, { constants }) => {
+    const own = Object.keys(constants);
+    return own.length > keys.length ? own : keys;
+  }, []);
+  const works = modelReferences.filter(isReference);
+  const text: string[] = [];
+  if (any(({ terms }) => terms !== null))
+    text.push(
+      `Term values: ${termValues(longest, symbols)}${series.length > 1 ? " with as many terms as each series has" : ""}; a band v′-v″ lies at G(v′) − G(v″) ${cite(...works)}.`,
+    );
+  else if (works.length > 0) text.push(`The model is that of ${cite(...works)}.`);
+  if (notation === "local" && any(({ terms }) => terms !== null))
+    text.push(`Local-mode notation: ν̃(v ← 0) = v ω̃ − v(v + 1) ω̃x, and so on ${cite("henry1977")}.`);
+  text.push(...fitting(series, request, cite));
+  if (row("morse")) text.push(`Morse relation: De = ωe²/(4ωexe), D0 = De − G(0) ${cite("morse1929")}.`);
+  if (row("spacing-sum"))
+    text.push(
+      `Spacing sum: the highest observed level and a straight-line remainder of the spacings beyond it ${cite("birge1926")}.`,
+    );
+  if (row("turning-point")) text.push("Turning point: G(v) where dG/dv = 0 past the highest observed level.");
+  if (row("near-limit")) text.push(`Near the limit: the long-range form of ${cite("lerouybernstein1970")}.`);
+  if (any(({ derived }) => derived.forceConstant !== null)) text.push("Force constant: k = (2πcωe)²μ.");
+  if (any(({ derived }) => derived.morseA !== null)) text.push(`Morse a: a = √(8π²cμωexe/h) ${cite("morse1929")}.`);
+  if (any(({ derived }) => derived.y00 !== null))
+    text.push(
+      `Y00 = (Be − ωexe)/4 + αeωe/(12Be) + (αeωe)²/(144Be³), included in De and the zero-point energy ${cite("dunham1932")}.`,
+    );
+  const airUsed = any(
+    ({ bands, predictions }) =>
+      bands.some(({ asRead }) => asRead.medium === "air") || predictions.some((p) => p.airWavelength !== null),
+  );
+  if (airUsed)
+    text.push(
+      `Wavelengths in air and vacuum are linked by the refractive index of dry air, ${request.air ?? "15 °C, 101325 Pa"} ${cite("ciddor1996")}.`,
+    );
+  text.push(`Units are converted with the constants of ${constantsSet} ${cite("codata2022")}.`);
+  if (any(({ bond }) => bond !== null && !bond.startsWith("reduced mass")))
+    text.push(`Isotope masses: AME2020 ${cite("ame2020")}.`);
+  return text.map((one) => unescapeCitations(sentence(one))).join(" ");
+}
+
+/** Square brackets of citations are ours and need no escape. */
+const unescapeCitations = (text: string) => text.replace(/\\\[([\d, ]+)\\\]/gu, "[$1]");
+
+function fitting(series: readonly SeriesResult[], request: FitDocument["request"], cite: Citations["cite"]): string[] {
+  const any = (test: (one: SeriesResult) => boolean) => series.some(test);
+  const text: string[] = [];
+  const weighted = any(({ quality }) => quality.chiSquare !== null);
+  text.push(
+    weighted
+      ? `The positions themselves are fitted by generalised least squares with the inverse covariance of the stated uncertainties as weights ${cite("aitken1936")}, by Householder QR on scaled columns ${cite("golub1965")}.`
+      : `The positions themselves are fitted by least squares with equal weights, by Householder QR on scaled columns ${cite("golub1965")}; uncertainties come from the residual variance.`,
+  );
+  if (request["shared-sigma"] !== undefined)
+    text.push("An offset common to all bands enters the covariance as fully correlated.");
+  if (request.spacings === "subtracted")
+    text.push(
+      "Spacings were subtracted from measured positions, so neighbours share errors: the covariance is tridiagonal.",
+    );
+  if (any(({ quality }) => quality.excess.applied && quality.excess.kind === "scatter"))
+    text.push(
+      request.scatter === undefined
+        ? `Where χ² is improbable at 5 %, a scatter τ common to all bands is added in quadrature so that χ² equals the degrees of freedom ${cite("mandel1970")}.`
+        : "A scatter τ common to all bands is added in quadrature, as given.",
+    );
+  if (any(({ quality }) => quality.excess.applied && quality.excess.kind === "birge"))
+    text.push(
+      `Where χ² is improbable at 5 %, the stated uncertainties are multiplied by the Birge factor √(χ²/ν) ${cite("birge1932")}.`,
+    );
+  if (any(({ covariance }) => covariance !== null))
+    text.push(`Uncertainties are propagated to first order with the full covariance ${cite("jcgm100")}.`);
+  if (any(({ bands }) => bands.some((band) => band.studentizedResidual !== null)))
+    text.push(`Residuals are externally studentised ${cite("cook1982")}.`);
+  return text;
+}

@@ -1,0 +1,33 @@
+import type { FitDocument } from "../../analysis/index.ts";
+import { constantsSet } from "../../quantity/index.ts";
+import { table } from "./table.ts";
+import { escape, fenced } from "./typeset.ts";
+
+/** How to get the same again: command line, version, input with its hash, constants, masses, settings. */
+export function reproduction({ tool, input, request, series }: FitDocument, commandLine: string): string {
+  const masses = series.some(({ bond }) => bond !== null && !bond.startsWith("reduced mass"));
+  const facts = [
+    `- version: ${escape(tool.name)} ${escape(tool.version)}`,
+    `- input: ${input === null ? "settings alone" : `${escape(input.source)}, sha256 \`${input.sha256}\``}`,
+    `- constants: ${constantsSet}`,
+    ...(masses ? ["- isotope masses: AME2020"] : []),
+  ];
+  const settings = Object.entries(request);
+  return [
+    fenced(commandLine, "sh"),
+    facts.join("\n"),
+    ...(settings.length === 0
+      ? []
+      : [
+          table({
+            columns: [
+              { quantity: "setting", align: "left" },
+              { quantity: "value", align: "left" },
+            ],
+            rows: settings.map(([name, value]) => ({ cells: [name, value] })),
+            notes: [],
+          }),
+        ]),
+    "The same command, version and input give the same bytes. Full precision stands in result.json, bands.csv, constants.csv (with the covariance) and predictions.csv.",
+  ].join("\n\n");
+}

@@ -1,0 +1,67 @@
+import type { SeriesResult } from "../../analysis/index.ts";
+import { notDetermined } from "../../quantity/index.ts";
+import type { TableData } from "../table-data.ts";
+import { bandDecimals } from "../text/band-decimals.ts";
+import { fixed, measured } from "../text/cells.ts";
+import { andList } from "../text/lists.ts";
+
+/** Observed beside calculated; excluded bands are marked and muted. */
+export function bandsTable({ bands }: SeriesResult): TableData {
+  const anyOut = bands.some(({ used }) => !used);
+  const rows = bands.map((band) => {
+    const decimals = bandDecimals(band);
+    const {
+      observed,
+      standardUncertainty: u,
+      calculated,
+      residual,
+      studentizedResidual,
+      leverage,
+      leftOutResidual,
+    } = band;
+    return {
+      cells: [
+        band.label,
+        u === null ? fixed(observed, decimals) : measured(observed, u),
+        fixed(calculated, decimals),
+        fixed(residual, decimals),
+        fixed(studentizedResidual, 2),
+        fixed(leverage, 2),
+        fixed(leftOutResidual, decimals),
+        ...(anyOut ? [band.used ? "" : "not used"] : []),
+      ],
+      muted: !band.used,
+    };
+  });
+  return {
+    columns: [
+      { quantity: "band", align: "left" },
+      { quantity: "observed", unit: "cm-1", align: "point" },
+      { quantity: "calculated", unit: "cm-1", align: "point" },
+      { quantity: "obs − calc", unit: "cm-1", align: "point" },
+      { quantity: "studentised", align: "point" },
+      { quantity: "leverage", align: "point", reportOnly: true },
+      { quantity: "obs − calc, left out", unit: "cm-1", align: "point", reportOnly: true },
+      ...(anyOut ? [{ quantity: "", align: "left" } as const] : []),
+    ],
+    rows,
+    notes: bandNotes(bands),
+  };
+}
+
+function bandNotes(bands: SeriesResult["bands"]): string[] {
+  const open = bands.filter((band) => band.used && band.studentizedResidual === null);
+  if (open.length === 0) return [];
+  const which =
+    open.length === bands.filter(({ used }) => used).length ? "" : ` of ${andList(open.map((b) => b.label))}`;
+  return [
+    `Studentised residual${which} ${notDetermined}: too few degrees of freedom, or the band alone fixes a constant.`,
+  ];
+}
+
+/** A sentence for each band left out of the fit, with the reason the input gives. */
+export function exclusions({ bands }: SeriesResult): string[] {
+  return bands
+    .filter(({ used }) => !used)
+    .map(({ label, note }) => `${label} is not used: ${note ?? "no reason was noted"}.`);
+}

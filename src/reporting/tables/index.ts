@@ -1,0 +1,9 @@
+export { bandsTable, exclusions } from "./bands.ts";
+export { constantsComparison, dissociationComparison, termsTable } from "./comparison.ts";
+export { constantsTable, correlation } from "./constants.ts";
+export { derivedTable } from "./derived.ts";
+export { dissociationTable, methodNames, SAFETY_LINE } from "./dissociation.ts";
+export { intervalNote } from "./interval-note.ts";
+export { LASER_LINE, predictionsTable } from "./predictions.ts";
+export { type QualityEntry, qualityEntries } from "./quality.ts";
+export { stabilityTable } from "./stability.ts";
