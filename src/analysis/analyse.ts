@@ -156,7 +156,7 @@ function predictionsOf(
       code: "above-highest-level",
       message: `predictions end at ${upTo}-0: the fitted series has no bound level above v = ${upTo}; ask for --up-to ${upTo} or less`,
     });
-  if (predictions.some((line) => line.vacuumWavelength > 1690))
+  if (predictions.some((line) => !line.observed && line.vacuumWavelength > 1690))
     warnings.push({
       code: "air-range-extended",
       message:

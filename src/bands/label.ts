@@ -7,9 +7,9 @@ export interface Levels {
   readonly lower: number;
 }
 
-/** Read v'-v", such as 3-0; null for anything else. The order of the levels is not checked. */
+/** Read v'-v", such as 3-0 (any dash, spaces around it); null for anything else. The order of the levels is not checked. */
 export function readVibrationalLabel(label: string): Levels | null {
-  const [, upper, lower] = /^(\d{1,3})-(\d{1,3})$/.exec(label) ?? [];
+  const [, upper, lower] = /^(\d{1,3})-(\d{1,3})$/.exec(canonicalLabel(label)) ?? [];
   return upper === undefined || lower === undefined ? null : { upper: Number(upper), lower: Number(lower) };
 }
 

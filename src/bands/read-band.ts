@@ -102,7 +102,8 @@ function labelOf({ band, upper, lower }: RawRow["cells"], wrong: (column: Column
     const missing = upper === undefined ? "upper" : "lower";
     if (upper === lower)
       wrong("band", { code: "no-label", what: "has no label", mend: 'write one such as 1-0 in the column "band"' });
-    else wrong(missing, { code: "no-label", what: `has no ${missing} level`, mend: "write both levels, such as 1 and 0" });
+    else
+      wrong(missing, { code: "no-label", what: `has no ${missing} level`, mend: "write both levels, such as 1 and 0" });
   }
   return whole ?? made ?? "";
 }

@@ -1,6 +1,7 @@
 import { CsvError, parse } from "csv-parse/sync";
-import { editDistance, type Fault, InputError, nearest } from "../messages/index.ts";
-import { type ColumnName, columnNames, type RawInput, type RawRow } from "./raw.ts";
+import { editDistance, type Fault, formatPlace, InputError, nearest } from "../messages/index.ts";
+import type { RawInput, RawRow } from "./raw.ts";
+import { readHeader } from "./read-header.ts";
 import { type Setting, settingNames } from "./settings.ts";
 
 /**
@@ -25,7 +26,8 @@ export function readCsv(text: string, source: string, delimiter: string): RawInp
     });
     throw new InputError(faults);
   }
-  const columns = readHeader(header, source, faults);
+  const columns = readHeader(header.cells, { source, line: header.line }, faults);
+  if (columns.every((column) => column === null)) throw new InputError(faults);
   if (records.length === 0)
     faults.push({
       code: "no-rows",
@@ -35,12 +37,7 @@ export function readCsv(text: string, source: string, delimiter: string): RawInp
     });
   const rows = records.map(({ cells, line }): RawRow => {
     if (cells.slice(columns.length).some((cell) => cell !== ""))
-      faults.push({
-        code: "too-many-cells",
-        place: { source, line },
-        what: `has ${cells.length} cells under ${columns.length} columns`,
-        mend: 'put quotes around a cell that holds the separator, such as "a, b"; decimals take a point',
-      });
+      faults.push(tooManyCells(cells, columns, { source, line }));
     const named = columns.flatMap((column, i) =>
       column !== null && (cells[i] ?? "") !== "" ? [[column, cells[i]!] as const] : [],
     );
@@ -48,6 +45,29 @@ export function readCsv(text: string, source: string, delimiter: string): RawInp
   });
   if (faults.length > 0) throw new InputError(faults);
   return { settings, rows };
+}
+
+/** A row longer than its header: a decimal comma in the position, or an unquoted cell. */
+function tooManyCells(
+  cells: readonly string[],
+  columns: ReturnType<typeof readHeader>,
+  place: { source: string; line: number },
+): Fault {
+  const at = columns.indexOf("position");
+  const [whole = "", decimals = ""] = cells.slice(at, at + 2);
+  if (at >= 0 && /^\d+$/.test(whole) && /^\d+(\(|\s*±|\s*\+\/?-|$)/.test(decimals))
+    return {
+      code: "decimal-comma",
+      place: { ...place, column: "position" },
+      what: `"${whole},${decimals}" has a decimal comma`,
+      mend: `write ${whole}.${decimals}`,
+    };
+  return {
+    code: "too-many-cells",
+    place,
+    what: `has ${cells.length} cells under ${columns.length} columns`,
+    mend: 'put quotes around a cell that holds the separator, such as "a, b"',
+  };
 }
 
 interface Line {
@@ -66,7 +86,8 @@ function parseLines(lines: readonly string[], source: string, delimiter: string,
       skip_records_with_empty_values: true,
       trim: true,
     }) as unknown as { record: string[]; info: { lines: number } }[];
-    return records.map(({ record, info }) => ({ cells: record, line: info.lines + offset }));
+    // the parser counts the last line of a record
+    return records.map(({ record, info }) => ({ cells: record, line: info.lines + offset - breaksIn(record) }));
   } catch (error) {
     if (!(error instanceof CsvError)) throw error;
     const line = typeof error.lines === "number" ? { line: error.lines + offset } : {};
@@ -80,6 +101,8 @@ function parseLines(lines: readonly string[], source: string, delimiter: string,
     ]);
   }
 }
+
+const breaksIn = (cells: readonly string[]) => cells.reduce((sum, cell) => sum + cell.split("\n").length - 1, 0);
 
 /** Cut a comment that begins after white space, outside quotes. */
 function withoutComment(line: string): string {
@@ -95,12 +118,21 @@ function withoutComment(line: string): string {
 function readPreamble(lines: readonly string[], source: string, faults: Fault[]): Map<string, Setting> {
   const settings = new Map<string, Setting>();
   lines.forEach((text, i) => {
-    const [, name, value] = /^\s*#+\s*([A-Za-z][A-Za-z_-]*)\s*:\s*(.*?)\s*$/.exec(text) ?? [];
+    const [, name, value] = /^\s*#+\s*([A-Za-z][A-Za-z_-]*)\s*:\s*(.*?)(?:\s+#.*)?\s*$/.exec(text) ?? [];
     if (name === undefined || value === undefined) return;
     const place = { source, line: i + 1 };
     const key = name.toLowerCase().replaceAll("_", "-");
-    if (settingNames.includes(key)) settings.set(key, { value, place });
-    else {
+    const earlier = settings.get(key);
+    if (earlier !== undefined)
+      faults.push({
+        code: "setting-twice",
+        place,
+        what: `"${name}" stands here and at ${formatPlace(earlier.place)}`,
+        mend: "write it once",
+      });
+    else if (settingNames.includes(key)) {
+      if (value !== "") settings.set(key, { value, place });
+    } else {
       const guess = nearest(key, settingNames);
       // Other words before a colon are comments; one slip away from a setting is a slip.
       if (guess !== null && guess.length > 3 && editDistance(key, guess) === 1)
@@ -113,46 +145,4 @@ function readPreamble(lines: readonly string[], source: string, faults: Fault[])
     }
   });
   return settings;
-}
-
-function readHeader({ cells, line }: Line, source: string, faults: Fault[]): (ColumnName | null)[] {
-  const place = { source, line };
-  const columns = cells.map((cell) => {
-    const name = cell.toLowerCase().replace(/[\s-]+/g, "_");
-    const found = columnNames.find((column) => column === name) ?? null;
-    if (found === null && name !== "") {
-      const guess = nearest(name, columnNames);
-      faults.push({
-        code: "unknown-column",
-        place,
-        what: `there is no column "${cell}"${guess === null ? "" : ` (did you mean ${guess}?)`}`,
-        mend: `the columns are ${columnNames.join(", ")}`,
-      });
-    }
-    return found;
-  });
-  columns.forEach((column, i) => {
-    if (column !== null && columns.indexOf(column) !== i)
-      faults.push({
-        code: "column-twice",
-        place,
-        what: `has the column "${column}" twice`,
-        mend: "name each column once",
-      });
-  });
-  if (!columns.includes("position"))
-    faults.push({
-      code: "no-position",
-      place,
-      what: "has no column position",
-      mend: "begin the table with a line such as band,position",
-    });
-  if (!columns.includes("band") && !(columns.includes("upper") && columns.includes("lower")))
-    faults.push({
-      code: "no-label",
-      place,
-      what: "has no column with the labels of the bands",
-      mend: "add a column band (1-0, 2-0 …), or upper and lower",
-    });
-  return columns;
 }

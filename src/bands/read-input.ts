@@ -15,11 +15,18 @@ export function formatOf(fileName: string): InputFormat | null {
  */
 export async function readInput(text: string, source: string, format: InputFormat): Promise<RawInput> {
   const plain = text.replace(/^\uFEFF/, "");
-  const fault = (code: string, what: string, mend: string) => new InputError([{ code, place: { source }, what, mend }]);
+  const fault = (code: string, what: string, mend: string, line?: number) =>
+    new InputError([{ code, place: line === undefined ? { source } : { source, line }, what, mend }]);
   // NUL: a binary file or UTF-16; U+FFFD: bytes that are no UTF-8.
   // biome-ignore lint/suspicious/noControlCharactersInRegex: that is what is looked for
-  if (/[\u0000\uFFFD]/.test(plain))
-    throw fault("not-text", "is not a text file in UTF-8", "save it as plain text (UTF-8) in CSV, TSV or TOML");
+  const stray = plain.search(/[\u0000\uFFFD]/);
+  if (stray >= 0)
+    throw fault(
+      "not-text",
+      "is not a text file in UTF-8",
+      "save it as plain text (UTF-8) in CSV, TSV or TOML",
+      plain.slice(0, stray).split(/\r\n|\n|\r/).length,
+    );
   if (plain.trim() === "")
     throw fault("empty-file", "is empty", "write a header such as band,position and one band a line");
   if (format === "toml") return (await import("./read-toml.ts")).readToml(plain, source);

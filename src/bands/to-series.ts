@@ -7,6 +7,7 @@ import { type ReadBand, readBand } from "./read-band.ts";
 import type { Series } from "./series.ts";
 import type { Settings } from "./settings.ts";
 import { phaseFaults, repeatChecks } from "./validate.ts";
+import { aboutAir, aboutBond, aboutMeaning, aboutSigma } from "./warnings.ts";
 
 /** Bands on a common footing, one series a name. */
 export interface Understood {
@@ -47,12 +48,12 @@ function oneSeries(
   const bands = read.map(({ band }) => band);
   const shown = name ?? (several ? "unnamed" : null);
   const before = shown === null ? "" : `series "${shown}": `;
-  faults.push(...phaseFaults(bands, before));
+  const used = bands.filter((band) => band.use);
+  faults.push(...phaseFaults(used, before));
   const { faults: repeated, warnings } = repeatChecks(bands, before);
   faults.push(...repeated);
   const texts = new Set(bands.map((band) => band.isotopologue?.text ?? null));
   const bond = texts.size === 1 && !texts.has(null) ? bands[0]!.isotopologue : context.bond;
-  const used = bands.filter((band) => band.use);
   if (used.length === 0 && faults.length === 0)
     faults.push({
       code: "no-used-bands",
@@ -66,7 +67,13 @@ function oneSeries(
     bands,
     shared: sharedPart(read, context),
     subtracted: context.subtracted,
-    warnings: [...warnings, ...aboutSigma(used), ...aboutAir(read)],
+    warnings: [
+      ...warnings,
+      ...aboutSigma(used),
+      ...aboutMeaning(used, context.meaning),
+      ...aboutBond(bond, context.bond),
+      ...aboutAir(read.filter(({ extrapolated }) => extrapolated).map(({ band }) => band)),
+    ],
   };
 }
 
@@ -74,26 +81,4 @@ function oneSeries(
 function sharedPart(read: readonly ReadBand[], { shared, medium, air }: Context): number[] | null {
   if (shared === null) return null;
   return read.map(({ band }) => shared.value * rate(band.position, shared.unit, { unit: shared.unit, medium, air }));
-}
-
-function aboutSigma(used: Series["bands"]): Warning[] {
-  const without = used.filter((band) => band.sigma === null);
-  if (without.length === 0 || without.length === used.length) return [];
-  return [
-    {
-      code: "sigma-partly-missing",
-      message: `${without.map((band) => band.label).join(", ")} carr${without.length === 1 ? "ies" : "y"} no σ while others do: σ is treated as unknown for all, and every band counts the same; give --sigma for those without`,
-    },
-  ];
-}
-
-function aboutAir(read: readonly ReadBand[]): Warning[] {
-  const beyond = read.filter(({ extrapolated }) => extrapolated).map(({ band }) => band.label);
-  if (beyond.length === 0) return [];
-  return [
-    {
-      code: "air-range-extended",
-      message: `${beyond.join(", ")}: beyond 1690 nm Ciddor's dispersion formula is extrapolated (error about 1e-4 cm-1); give vacuum values where that matters`,
-    },
-  ];
 }

@@ -7,20 +7,35 @@ function origin({ tool, input }: FitDocument): string {
   return `written by ${tool.name} ${tool.version} ${from.replaceAll(":", " ")}`;
 }
 
-/** Settings without which the bands of the file would be read otherwise, as `name: value`. */
+/** Settings that say how bands are fitted, not how positions are read (those are in cm-1 and vacuum here). */
+const CARRIED = [
+  "model",
+  "terms",
+  "fix",
+  "spacings",
+  "air",
+  "phase",
+  "be",
+  "alpha-e",
+  "re",
+  "excess",
+  "scatter",
+  "coverage",
+];
+const ALSO_CARRIED = ["notation", "up-to"];
+
+/** What gives the same fit when the file is read again, as `name: value`. */
 function settings({ series, request }: FitDocument): string[] {
-  const same = <T>(of: (s: FitDocument["series"][number]) => T): T | null => {
-    const [first, ...others] = series.map(of);
-    return first !== undefined && others.every((other) => other === first) ? first : null;
-  };
-  const bond = same((s) => s.bond);
-  const mass = same((s) => s.reducedMass);
-  const terms = same((s) => s.terms);
+  const [first] = series;
+  const bond = first !== undefined && series.every((one) => one.bond === first.bond) ? first.bond : null;
+  const paired = bond !== null && !bond.startsWith("reduced mass");
+  const mass = bond !== null && !paired ? first!.reducedMass : null;
   return [
-    ...(bond !== null && !bond.startsWith("reduced mass") ? [`bond: ${bond}`] : []),
-    ...(bond?.startsWith("reduced mass") && mass !== null ? [`reduced-mass: ${mass}`] : []),
-    ...(terms === null ? [] : [`terms: ${terms}`]),
-    ...(request.spacings === undefined ? [] : [`spacings: ${request.spacings}`]),
+    ...(paired ? [`bond: ${bond}`] : []),
+    ...(mass === null ? [] : [`reduced-mass: ${mass}`]),
+    ...[...CARRIED, ...ALSO_CARRIED].flatMap((name) =>
+      request[name] === undefined ? [] : [`${name}: ${request[name]}`],
+    ),
   ];
 }
 

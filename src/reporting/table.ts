@@ -37,7 +37,8 @@ export function renderTable({ columns, rows, notes }: TableData, options: TableO
   const split = columns.some((column, i) => displayWidth(wholeHead(column)) > widest(bodies[i]!) + 2);
   const set = columns.map((column, i) => setColumn(column, bodies[i]!, split));
   const room = width - indent;
-  const gap = spanOf(set, GAPS.wide) > room ? GAPS.narrow : GAPS.wide;
+  const squeezed = spanOf(set, GAPS.wide) > room && spanOf(set, GAPS.narrow) <= room;
+  const gap = squeezed ? GAPS.narrow : GAPS.wide;
   const blocks = blocksOf(set, room, gap).map((block) => {
     const line = (texts: readonly string[]) =>
       (

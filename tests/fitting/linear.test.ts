@@ -82,6 +82,25 @@ describe("linear fit", () => {
     expect(Math.abs(known.chiSquare / known.degreesOfFreedom - 1)).toBeLessThan(1e-8);
   });
 
+  it("a shared error is a nuisance offset known to its σ: same constants, same covariance", () => {
+    const sigmas = data.map(() => 0.3);
+    const shared = fitLinear(linearProblem(line, data, { sigmas, shared: [data.map(() => 2)] }));
+    const offset = fitLinear(
+      linearProblem(
+        line.map((row) => [...row, 1]),
+        data,
+        { sigmas },
+        [{}, {}, { prior: { value: 0, sigma: 2 } }],
+      ),
+    );
+    for (const k of [0, 1]) {
+      // an identity of generalised least squares; rounding of two routes at this condition
+      expect(Math.abs(shared.values[k]! / offset.values[k]! - 1)).toBeLessThan(1e-9);
+      expect(Math.abs(shared.covariance![k]![k]! / offset.covariance![k]![k]! - 1)).toBeLessThan(1e-8);
+    }
+    expect(Math.abs(shared.chiSquare / offset.chiSquare - 1)).toBeLessThan(1e-8);
+  });
+
   it("scales with the data: twice the positions, twice the constants", () => {
     const once = fitLinear(linearProblem(line, data));
     const twice = fitLinear(

@@ -5,7 +5,7 @@ import { exclusions } from "../tables/index.ts";
 import { bandDecimals } from "../text/band-decimals.ts";
 import { fixed, measured } from "../text/cells.ts";
 import { unitSymbol } from "../text/units.ts";
-import { sentence, table } from "./table.ts";
+import { table, words } from "./table.ts";
 
 const isLength = (unit: string) => ["nm", "um"].includes(readUnit(unit) ?? "");
 
@@ -49,5 +49,5 @@ export function bandsAsRead({ bands }: SeriesResult): string {
 /** Which bands were left out, and why. */
 export function excludedBands(series: SeriesResult): string {
   const out = exclusions(series);
-  return out.length === 0 ? "Every band was used." : out.map((line) => `- ${sentence(line)}`).join("\n");
+  return out.length === 0 ? "Every band was used." : out.map((line) => `- ${words(line)}`).join("\n");
 }

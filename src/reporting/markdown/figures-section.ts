@@ -1,5 +1,5 @@
-import { sentence } from "./table.ts";
-import { escape } from "./typeset.ts";
+import { words } from "./table.ts";
+import { verbatim } from "./typeset.ts";
 
 /** A drawn figure as the report shows it. */
 export interface ReportFigure {
@@ -15,7 +15,7 @@ export function figuresSection(figures: readonly ReportFigure[]): string {
   return figures
     .map(({ file, caption, alt }, i) => {
       const path = encodeURI(file).replace(/[()]/gu, (bracket) => (bracket === "(" ? "%28" : "%29"));
-      return `![${escape(alt)}](${path})\n\nFigure ${i + 1}. ${sentence(caption)}`;
+      return `![${verbatim(alt)}](${path})\n\nFigure ${i + 1}. ${words(caption)}`;
     })
     .join("\n\n");
 }

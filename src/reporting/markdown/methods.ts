@@ -37,6 +37,7 @@ export function methods({ document, notation, symbols, citations, modelReference
     const own = Object.keys(constants);
     return own.length > keys.length ? own : keys;
   }, []);
+  const [first, second] = longest.map((key) => symbolOf(symbols, key));
   const works = modelReferences.filter(isReference);
   const text: string[] = [];
   if (any(({ terms }) => terms !== null))
@@ -45,20 +46,23 @@ export function methods({ document, notation, symbols, citations, modelReference
     );
   else if (works.length > 0) text.push(`The model is that of ${cite(...works)}.`);
   if (notation === "local" && any(({ terms }) => terms !== null))
-    text.push(`Local-mode notation: ν̃(v ← 0) = v ω̃ − v(v + 1) ω̃x, and so on ${cite("henry1977")}.`);
+    text.push(
+      `Local-mode notation, the same algebra: for two terms ν̃(0 → v) = v ω̃ − v(v + 1) ω̃x ${cite("henry1977")}.`,
+    );
   text.push(...fitting(series, request, cite));
-  if (row("morse")) text.push(`Morse relation: De = ωe²/(4ωexe), D0 = De − G(0) ${cite("morse1929")}.`);
+  if (row("morse")) text.push(`Morse relation: De = ${first}²/(4${second}), D0 = De − G(0) ${cite("morse1929")}.`);
   if (row("spacing-sum"))
     text.push(
       `Spacing sum: the highest observed level and a straight-line remainder of the spacings beyond it ${cite("birge1926")}.`,
     );
   if (row("turning-point")) text.push("Turning point: G(v) where dG/dv = 0 past the highest observed level.");
   if (row("near-limit")) text.push(`Near the limit: the long-range form of ${cite("lerouybernstein1970")}.`);
-  if (any(({ derived }) => derived.forceConstant !== null)) text.push("Force constant: k = (2πcωe)²μ.");
-  if (any(({ derived }) => derived.morseA !== null)) text.push(`Morse a: a = √(8π²cμωexe/h) ${cite("morse1929")}.`);
+  if (any(({ derived }) => derived.forceConstant !== null)) text.push(`Force constant: k = (2πc${first})²μ.`);
+  if (any(({ derived }) => derived.morseA !== null))
+    text.push(`Morse a: a = √(8π²cμ${second}/h) ${cite("morse1929")}.`);
   if (any(({ derived }) => derived.y00 !== null))
     text.push(
-      `Y00 = (Be − ωexe)/4 + αeωe/(12Be) + (αeωe)²/(144Be³), included in De and the zero-point energy ${cite("dunham1932")}.`,
+      `Y00 = (Be − ${second})/4 + αe${first}/(12Be) + (αe${first})²/(144Be³), included in De and the zero-point energy ${cite("dunham1932")}.`,
     );
   const airUsed = any(
     ({ bands, predictions }) =>
@@ -74,7 +78,7 @@ export function methods({ document, notation, symbols, citations, modelReference
   return text.map((one) => unescapeCitations(sentence(one))).join(" ");
 }
 
-/** Square brackets of citations are ours and need no escape. */
+/** Square brackets of citations are ours and need no verbatim. */
 const unescapeCitations = (text: string) => text.replace(/\\\[([\d, ]+)\\\]/gu, "[$1]");
 
 function fitting(series: readonly SeriesResult[], request: FitDocument["request"], cite: Citations["cite"]): string[] {

@@ -24,8 +24,8 @@ import { figuresSection, type ReportFigure } from "./figures-section.ts";
 import { methods } from "./methods.ts";
 import { reproduction } from "./reproduction.ts";
 import { summary } from "./summary.ts";
-import { sentence, table } from "./table.ts";
-import { escape } from "./typeset.ts";
+import { sentence, table, words } from "./table.ts";
+import { verbatim } from "./typeset.ts";
 
 export interface ReportOptions {
   /** what makes this report again, as typed in a shell */
@@ -68,14 +68,14 @@ export function renderReport(document: FitDocument, options: ReportOptions): str
     ["Reproduction", [reproduction(document, commandLine)]],
     ["References", [citations.list()]],
   ];
-  const title = `# Vibrational analysis of ${andList(series.map(({ name }) => escape(name)))}`;
+  const title = `# Vibrational analysis of ${andList(series.map(({ name }) => verbatim(name)))}`;
   const body = parts.filter(([, text]) => text.length > 0).map(([head, text]) => [`## ${head}`, ...text].join("\n\n"));
   return `${[title, ...body].join("\n\n")}\n`;
 }
 
 /** One text a series, under its name when there are several. */
 function perSeries(series: readonly SeriesResult[], write: (one: SeriesResult) => string): string[] {
-  return series.flatMap((one) => (series.length > 1 ? [`### ${escape(one.name)}`, write(one)] : [write(one)]));
+  return series.flatMap((one) => (series.length > 1 ? [`### ${verbatim(one.name)}`, write(one)] : [write(one)]));
 }
 
 function constantsPart(one: SeriesResult, symbols: Symbols): string {
@@ -86,7 +86,7 @@ function constantsPart(one: SeriesResult, symbols: Symbols): string {
     table(constantsTable(one, symbols)),
     ...(between === null ? [] : [typeof between === "string" ? `${sentence(between)}.` : table(between)]),
     table({
-      columns: entries.map(({ name }) => ({ quantity: name, align: "right" })),
+      columns: entries.map(({ name }) => ({ quantity: name, align: "point" }) as const),
       rows: [{ cells: entries.map(({ value }) => value) }],
       notes,
     }),
@@ -110,9 +110,9 @@ function stabilityPart(one: SeriesResult, symbols: Symbols): string {
 /** Those on the request, then those of each series under its name. */
 function warnings({ warnings: general, series }: FitDocument): string[] {
   const lines = [
-    ...general.map(({ message }) => `- ${sentence(message)}`),
+    ...general.map(({ message }) => `- ${words(message)}`),
     ...series.flatMap((one) =>
-      one.warnings.map(({ message }) => `- ${series.length > 1 ? `${escape(one.name)}: ` : ""}${sentence(message)}`),
+      one.warnings.map(({ message }) => `- ${series.length > 1 ? `${verbatim(one.name)}: ` : ""}${words(message)}`),
     ),
   ];
   return [lines.length === 0 ? "None." : lines.join("\n")];

@@ -1,14 +1,14 @@
 import type { FitDocument } from "../../analysis/index.ts";
 import { constantsSet } from "../../quantity/index.ts";
 import { table } from "./table.ts";
-import { escape, fenced } from "./typeset.ts";
+import { fenced, verbatim } from "./typeset.ts";
 
 /** How to get the same again: command line, version, input with its hash, constants, masses, settings. */
 export function reproduction({ tool, input, request, series }: FitDocument, commandLine: string): string {
   const masses = series.some(({ bond }) => bond !== null && !bond.startsWith("reduced mass"));
   const facts = [
-    `- version: ${escape(tool.name)} ${escape(tool.version)}`,
-    `- input: ${input === null ? "settings alone" : `${escape(input.source)}, sha256 \`${input.sha256}\``}`,
+    `- version: ${verbatim(tool.name)} ${verbatim(tool.version)}`,
+    `- input: ${input === null ? "settings alone" : `${verbatim(input.source)}, sha256 \`${input.sha256}\``}`,
     `- constants: ${constantsSet}`,
     ...(masses ? ["- isotope masses: AME2020"] : []),
   ];

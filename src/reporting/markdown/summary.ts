@@ -1,10 +1,11 @@
 import type { SeriesResult } from "../../analysis/index.ts";
 import { type Symbols, symbolOf } from "../symbols.ts";
 import { bondText } from "../text/bond-text.ts";
-import { exact, quantity } from "../text/cells.ts";
+import { exact, measured, quantity } from "../text/cells.ts";
 import { andList, count } from "../text/lists.ts";
 import { unitSymbol } from "../text/units.ts";
 import { sentence } from "./table.ts";
+import { verbatim } from "./typeset.ts";
 
 /** What was found for a series, in two sentences. */
 export function summary(series: SeriesResult, symbols: Symbols): string {
@@ -16,16 +17,13 @@ export function summary(series: SeriesResult, symbols: Symbols): string {
       : `${symbolOf(symbols, key)} = ${quantity(q)} ${unitSymbol(q.unit)}`,
   );
   const how = terms === null ? `the ${model} model` : count(terms, "term");
-  const first = `${count(quality.bands, "band")} of ${of} fitted with ${how} give${quality.bands === 1 ? "s" : ""} ${andList(values)}.`;
+  const fitted = sentence(`fitted with ${how} give${quality.bands === 1 ? "s" : ""} ${andList(values)}.`);
+  const first = `${count(quality.bands, "band")} of ${verbatim(of)} ${fitted}`;
   const d0 = dissociation[0];
   if (d0?.d0 == null)
-    return sentence(`${first} No dissociation energy follows from them: ${d0?.note ?? "not determined"}.`);
+    return `${first} ${sentence(`No dissociation energy follows from them: ${d0?.note ?? "not determined"}.`)}`;
   const [kj, u] = d0.converted?.["kJ/mol"] ?? [null, null];
-  const molar =
-    kj === null
-      ? ""
-      : `, ${quantity({ value: kj, standardUncertainty: u, interval95: null, unit: "kJ/mol" })} kJ mol⁻¹`;
-  return sentence(
-    `${first} The Morse relation extrapolates them to D0 = ${quantity(d0.d0)} cm⁻¹${molar}; its uncertainty is that of the fit alone.`,
-  );
+  const molar = kj === null ? "" : `, ${measured(kj, u)} kJ mol⁻¹`;
+  const second = `The Morse relation extrapolates them to D0 = ${quantity(d0.d0)} cm⁻¹${molar}; its uncertainty is that of the fit alone.`;
+  return `${first} ${sentence(second)}`;
 }

@@ -25,7 +25,7 @@ export function holdUnits(text: string): string {
 }
 
 /** Text from outside (names, notes, warnings) so that Markdown shows it as it is, on one line. */
-export function escape(text: string): string {
+export function verbatim(text: string): string {
   return text
     .replace(/\s+/gu, " ")
     .trim()

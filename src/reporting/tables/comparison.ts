@@ -59,6 +59,7 @@ export function dissociationComparison(all: readonly SeriesResult[]): TableData 
 /** Numbers of terms side by side, as `--terms auto` compared them; null when they were given. */
 export function termsTable({ comparison }: SeriesResult): TableData | null {
   if (comparison === null) return null;
+  const corrected = comparison.some(({ aicc }) => aicc !== null);
   const test = comparison.find(({ step }) => step !== null)?.step?.kind ?? null;
   return {
     columns: [
@@ -67,7 +68,7 @@ export function termsTable({ comparison }: SeriesResult): TableData | null {
       { quantity: "χ²", align: "point" },
       { quantity: "probability", align: "point" },
       { quantity: "rms", unit: "cm-1", align: "point" },
-      { quantity: "AICc", align: "point", reportOnly: true },
+      { quantity: corrected ? "AICc" : "AIC", align: "point", reportOnly: true },
       { quantity: "left-out rms", unit: "cm-1", align: "point", reportOnly: true },
       { quantity: "P of the step", align: "point" },
     ],
@@ -78,7 +79,7 @@ export function termsTable({ comparison }: SeriesResult): TableData | null {
         statistic(row.chiSquare),
         probability(row.probability),
         row.rms < 1e-6 ? "< 10⁻⁶" : size(row.rms),
-        statistic(row.aicc),
+        statistic(corrected ? row.aicc : row.aic),
         size(row.leaveOneOutRms),
         row.step === null ? notDetermined : probability(row.step.probability),
       ],
