@@ -6,6 +6,7 @@ import { chooseTerms } from "./choice-of-terms.ts";
 import { derivedNumbers, highestLevel } from "./derived.ts";
 import { dissociationRows } from "./dissociation/rows.ts";
 import { fitWarnings } from "./fit-warnings.ts";
+import { refineIntervals } from "./intervals.ts";
 import type { AnalysisOptions } from "./options.ts";
 import { predict } from "./predictions.ts";
 import { propagate } from "./propagation.ts";
@@ -34,7 +35,7 @@ export function analyse(series: Series, model: Model, asked: AnalysisOptions): S
   const bands = bandResults(solution);
   const { predictions, warnings } = predictionsOf(solution, well, top);
   const free = solution.stated.keys.flatMap((key, k) => (options.fixed[key]?.sigma === null ? [] : [k]));
-  return {
+  return refineIntervals(solution, {
     name: series.name,
     model: model.name,
     terms: model.terms === null ? null : p.length,
@@ -57,6 +58,7 @@ export function analyse(series: Series, model: Model, asked: AnalysisOptions): S
     predictions,
     stability: stabilityRows(solution),
     comparison: choice?.comparison ?? null,
+    intervals: null,
     fitReport: {
       method: "generalised least squares on the band positions, Householder QR on scaled columns",
       converged: fit.converged,
@@ -70,7 +72,7 @@ export function analyse(series: Series, model: Model, asked: AnalysisOptions): S
       ...warnings,
       ...aboutWell(well, p, series, options, y00 !== null),
     ],
-  };
+  });
 }
 
 const unit = (size: number, at: number) => Array.from({ length: size }, (_, k) => (k === at ? 1 : 0));

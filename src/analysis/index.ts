@@ -1,5 +1,5 @@
 export { analyse } from "./analyse.ts";
-export type { AnalysisOptions, ExcessKind } from "./options.ts";
+export type { AnalysisOptions, ExcessKind, IntervalKind } from "./options.ts";
 export { predict } from "./predictions.ts";
 export { type Propagation, propagate, quantityFrom } from "./propagation.ts";
 export type * from "./result.ts";

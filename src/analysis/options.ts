@@ -1,6 +1,7 @@
 import type { ModelOptions } from "../models/index.ts";
 import type { AirConditions } from "../quantity/index.ts";
 
+export type IntervalKind = "linear" | "profile" | "resample";
 export type ExcessKind = "scatter" | "birge" | "none";
 
 /** Everything `analyse` may be told beside the series and the model; nothing is optional here. */
@@ -12,6 +13,9 @@ export interface AnalysisOptions extends ModelOptions {
   readonly scatter: number | null;
   /** a further level of intervals, printed beside the 95 % ones */
   readonly coverage: number | null;
+  readonly intervals: IntervalKind;
+  readonly resamples: number;
+  readonly seed: number;
   /** highest level to predict; null: three beyond the last band */
   readonly upTo: number | null;
   readonly air: AirConditions;

@@ -79,6 +79,22 @@ export interface ComparisonRow {
   readonly chosen: boolean;
 }
 
+/** How the intervals of constants, De, D0 and predictions were found, when not to first order. */
+export interface IntervalRecord {
+  readonly kind: "profile" | "resample";
+  readonly resamples: number | null;
+  readonly seed: number | null;
+  /** value of a constant or of D0, and the rise of χ² (in units of the variance) when it is held there */
+  readonly profiles: readonly { readonly key: string; readonly points: readonly (readonly [number, number])[] }[];
+  /** histograms of the draws; `missing`: share of draws in which the quantity does not exist */
+  readonly distributions: readonly {
+    readonly key: string;
+    readonly edges: readonly number[];
+    readonly counts: readonly number[];
+    readonly missing: number;
+  }[];
+}
+
 export interface Quality {
   readonly bands: number;
   readonly degreesOfFreedom: number;
@@ -137,6 +153,8 @@ export interface SeriesResult {
   readonly stability: readonly StabilityRow[];
   /** with --terms auto: the numbers of terms compared; otherwise null */
   readonly comparison: readonly ComparisonRow[] | null;
+  /** null: intervals to first order */
+  readonly intervals: IntervalRecord | null;
   readonly fitReport: {
     readonly method: string;
     readonly converged: boolean;

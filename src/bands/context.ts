@@ -69,15 +69,15 @@ export function isWrong(x: unknown): x is Wrong {
 }
 
 export function unitFrom(text: string): UnitName | Wrong {
+  const unit = readUnit(text);
+  if (unit !== null) return unit;
   const near = nearestUnit(text);
   const hint = near === null ? "" : ` (did you mean ${near}?)`;
-  return (
-    readUnit(text) ?? {
-      code: "unknown-unit",
-      what: `"${text}" is not a unit${hint}`,
-      mend: `write one of ${unitNames.join(", ")}`,
-    }
-  );
+  return {
+    code: "unknown-unit",
+    what: `"${text}" is not a unit${hint}`,
+    mend: `write one of ${unitNames.join(", ")}`,
+  };
 }
 
 export function mediumFrom(text: string): Medium | Wrong {

@@ -23,15 +23,14 @@ const MEANT: Readonly<Record<string, ColumnName>> = {
 export function readHeader(cells: readonly string[], place: Place, faults: Fault[]): (ColumnName | null)[] {
   const fault = (code: string, what: string, mend: string) => faults.push({ code, place, what, mend });
   const columns = cells.map(columnOf);
-  if (columns.every((column) => column === null)) {
-    const [code, what, mend] = noHeader(cells);
-    fault(code, what, mend);
+  const nothing = columns.every((column) => column === null) ? noHeader(cells) : null;
+  if (nothing !== null) {
+    fault(...nothing);
     return columns;
   }
   cells.forEach((cell, i) => {
     if (columns[i] !== null || cell === "") return;
-    const [code, what, mend] = unknownColumn(cell);
-    fault(code, what, mend);
+    fault(...unknownColumn(cell));
   });
   columns.forEach((column, i) => {
     if (column !== null && columns.indexOf(column) !== i)
@@ -59,7 +58,7 @@ function columnOf(cell: string): ColumnName | null {
 
 /** The column probably meant by a name that is none; a unit after it, `position (nm)`, is left aside. */
 function guess(cell: string): ColumnName | null {
-  const [word = ""] = /^[\p{L}\p{N}_]+/u.exec(tidy(cell)) ?? [];
+  const [word = ""] = /^\p{L}[\p{L}\p{N}_]*/u.exec(tidy(cell)) ?? [];
   const name = word.replace(/_+$/, "");
   if (Object.hasOwn(MEANT, name)) return MEANT[name]!;
   return columnNames.find((column) => column === name) ?? (nearest(name, columnNames) as ColumnName | null);
@@ -73,15 +72,18 @@ function unknownColumn(cell: string): [code: string, what: string, mend: string]
     : ["unknown-column", what, `the columns are ${columnNames.join(", ")}`];
 }
 
-/** A first line in which no word is a column: the wrong separator, or no header at all. */
-function noHeader(cells: readonly string[]): [code: string, what: string, mend: string] {
+/** A first line in which no word is a column: the wrong separator, or no header at all; null when one is probably meant. */
+function noHeader(cells: readonly string[]): [code: string, what: string, mend: string] | null {
   const whole = cells.join(",");
-  for (const [separator, name, mend] of [
-    [";", "semicolons", "separate the columns by commas, and write decimals with a point"],
-    ["\t", "tabs", "say --format tsv, or separate them by commas"],
-    [",", "commas", "say --format csv, or separate them by tabs"],
-  ] as const)
+  for (const [separator, name, mend] of separators)
     if (cells.length === 1 && whole.split(separator).some((cell) => columnOf(cell.trim()) !== null))
       return ["wrong-separator", `the columns are separated by ${name}`, mend];
+  if (cells.some((cell) => guess(cell) !== null)) return null;
   return ["no-header", `"${whole}" is no header`, "begin the table with a line such as band,position"];
 }
+
+const separators = [
+  [";", "semicolons", "separate them by commas, and write decimals with a point"],
+  ["\t", "tabs", "say --format tsv, or separate them by commas"],
+  [",", "commas", "say --format csv, or separate them by tabs"],
+] as const;

@@ -35,6 +35,10 @@ export const settingNames: readonly string[] = [
   "excess",
   "scatter",
   "coverage",
+  "intervals",
+  "resamples",
+  "seed",
+  "robust",
   "notation",
   "up-to",
 ];

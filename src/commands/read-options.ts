@@ -1,4 +1,4 @@
-import type { AnalysisOptions, ExcessKind } from "../analysis/index.ts";
+import type { AnalysisOptions, ExcessKind, IntervalKind } from "../analysis/index.ts";
 import type { Setting, Settings } from "../bands/index.ts";
 import { type Fault, nearest } from "../messages/index.ts";
 import { type Fixed, findModel, type Model, modelNames, type Notation } from "../models/index.ts";
@@ -72,6 +72,10 @@ export async function readOptions(
     excess: reader.choice<ExcessKind>("excess", ["scatter", "birge", "none"], "scatter"),
     scatter: reader.number("scatter", positive, "write the added scatter in cm-1, such as 0.3"),
     coverage: reader.number("coverage", (x) => x > 0 && x < 1, "write a probability between 0 and 1, such as 0.99"),
+    intervals: reader.choice<IntervalKind>("intervals", ["linear", "profile", "resample"], "linear"),
+    resamples:
+      reader.number("resamples", whole(100, 1e7), "write a number of draws from 100 up, such as 10000") ?? 10_000,
+    seed: reader.number("seed", whole(0, 2 ** 31), "write a whole number such as 1") ?? 1,
     upTo: reader.number("up-to", whole(1, 500), "write the highest level to predict, such as 9"),
     air: readAirConditions(reader),
     be: reader.number("be", positive, "write Be in cm-1, such as 10.593"),

@@ -53,6 +53,12 @@ export interface FitRequest {
   readonly scatter?: Word;
   /** another level of intervals, such as 0.99 */
   readonly coverage?: Word;
+  /** how intervals are found; @default "linear" */
+  readonly intervals?: string;
+  /** draws of `intervals: "resample"`; @default 10000 */
+  readonly resamples?: Word;
+  /** of the draws; @default 1 */
+  readonly seed?: Word;
   /** @default "equilibrium" */
   readonly notation?: string;
   /** highest level to predict; @default three beyond the last band */

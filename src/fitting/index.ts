@@ -4,5 +4,7 @@ export * from "./excess.ts";
 export { dot, estimator, fitLinear, type LinearFit, UndeterminedError } from "./linear.ts";
 export * from "./nonlinear/fit-nonlinear.ts";
 export * from "./problem.ts";
+export * from "./profile.ts";
 export { inverseGram, triangularise } from "./qr.ts";
+export * from "./resampling.ts";
 export { covarianceOf } from "./whitening.ts";

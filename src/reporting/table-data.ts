@@ -9,7 +9,7 @@ export interface Column {
   readonly reportOnly?: boolean;
 }
 
-export interface Row {
+interface Row {
   readonly cells: readonly string[];
   /** shown, but no part of the fit */
   readonly muted?: boolean;

@@ -13,9 +13,9 @@ import {
   references,
   renderJson,
 } from "../../src/reporting/index.ts";
-import { bare, growing, local, sideBySide, threeBands } from "./documents.ts";
+import { bare, compared, growing, local, sideBySide, threeBands } from "./documents.ts";
 
-const cases = Object.entries({ sideBySide, threeBands, bare, growing, local });
+const cases = Object.entries({ sideBySide, compared, threeBands, bare, growing, local });
 const rowsOf = (text: string) =>
   parse(text, { comment: "#", comment_no_infix: true, columns: true }) as Record<string, string>[];
 

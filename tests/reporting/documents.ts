@@ -22,11 +22,15 @@ const twoBonds = `band,position,unit,medium,series,use,note
 
 export const symbols = (notation: Notation = "equilibrium") => constantSymbols(oscillator.constants, notation);
 
-/** Two series with σ, three terms. */
-export const sideBySide = (): Promise<FitDocument> =>
-  fit({ input: { text: twoBonds, source: "bonds.csv", format: "csv" }, terms: 3, bond: "16O 1H", coverage: 0.99 });
+const bonds = { input: { text: twoBonds, source: "bonds.csv", format: "csv" }, bond: "16O 1H" } as const;
 
-/** HCl, three bands without σ (Herzberg 1950, from memory); one degree of freedom. */
+/** Two series with σ, three terms. */
+export const sideBySide = (): Promise<FitDocument> => fit({ ...bonds, terms: 3 });
+
+/** The same with numbers of terms compared and a further level of intervals. */
+export const compared = (): Promise<FitDocument> => fit({ ...bonds, terms: "auto", coverage: 0.99 });
+
+/** HCl, three bands without σ (band origins from memory); one degree of freedom. */
 export const threeBands = (): Promise<FitDocument> =>
   fit({ series: "2885.9775 5667.9841 8346.7821", bond: "1H 35Cl", name: "HCl" });
 

@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { type ReportOptions, renderReport } from "../../src/reporting/index.ts";
-import { bare, growing, local, sideBySide, symbols, threeBands } from "./documents.ts";
+import { bare, compared, growing, local, sideBySide, symbols, threeBands } from "./documents.ts";
 
 const options: ReportOptions = {
   commandLine: "rungwise report input.csv --out again",
@@ -8,7 +8,7 @@ const options: ReportOptions = {
   notation: "equilibrium",
   symbols: symbols(),
 };
-const cases = Object.entries({ sideBySide, threeBands, bare, growing, local });
+const cases = Object.entries({ sideBySide, compared, threeBands, bare, growing, local });
 const SECTIONS = [
   "Summary",
   "Bands as read and as used",

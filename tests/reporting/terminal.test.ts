@@ -3,10 +3,10 @@ import { describe, expect, it } from "vitest";
 import type { FitDocument } from "../../src/analysis/index.ts";
 import { type FitTextOptions, renderFit, renderPredictions, renderWarnings } from "../../src/reporting/index.ts";
 import { displayWidth } from "../../src/reporting/text/display-width.ts";
-import { bare, growing, local, sideBySide, symbols, threeBands } from "./documents.ts";
+import { bare, compared, growing, local, sideBySide, symbols, threeBands } from "./documents.ts";
 
 const plain: FitTextOptions = { colour: false, notation: "equilibrium", quiet: false, symbols: symbols() };
-const all = { sideBySide, threeBands, bare, growing, local };
+const all = { sideBySide, compared, threeBands, bare, growing, local };
 const cases = Object.entries(all);
 
 describe("a fit in the terminal", () => {
@@ -31,6 +31,7 @@ describe("a fit in the terminal", () => {
     expect(stripVTControlCharacters(coloured)).toBe(renderFit(document, plain));
   });
 
+  // Two constants on three overtones leave (3ν1 − 3ν2 + ν3)/√19 = 0.175 cm-1, so rms 0.175/√3 = 0.10.
   it("prints quality in a fixed order", async () => {
     const text = renderFit(await threeBands(), plain).replace(/\n {2}/g, " ");
     expect(text).toMatch(
@@ -52,6 +53,12 @@ describe("a fit in the terminal", () => {
     expect(text.startsWith("Side by side\n")).toBe(true);
     expect(text.indexOf("\na\n")).toBeLessThan(text.indexOf("\nb\n"));
     expect(renderFit(await threeBands(), plain)).not.toContain("Side by side");
+  });
+
+  it("adds another level of intervals and the comparison of terms when there are any", async () => {
+    const text = renderFit(await compared(), plain);
+    expect(text).toMatch(/95 % interval \/ +99 % interval \//);
+    expect(text).toMatch(/^ {2}3, chosen +4 +4\.96 +0\.29 /m);
   });
 
   it("marks excluded bands in words and says why", async () => {

@@ -58,7 +58,7 @@ function predictionNotes(shown: readonly Prediction[], mark: boolean): string[] 
     notes.push(
       "Last band out: how far the same model misses the highest observed band when that is left out; twice it is the more honest margin.",
     );
-  else notes.push("Last band out —: without the highest band the others do not determine the constants.");
+  else notes.push("Last band out —: there is no band to leave out, or the others do not determine the constants.");
   if (shown.some(({ position }) => position.standardUncertainty === null))
     notes.push("Positions stand without uncertainty: none can be had for the constants.");
   if (shown.some(({ airWavelength }) => airWavelength === null))

@@ -2,7 +2,7 @@ import type { SeriesResult } from "../../analysis/index.ts";
 import { fixed, probability, size, statistic } from "../text/cells.ts";
 
 /** One number of the quality of a fit, in a fixed order. */
-export interface QualityEntry {
+interface QualityEntry {
   readonly name: string;
   readonly value: string;
 }
