@@ -60,7 +60,7 @@ export function analyse(series: Series, model: Model, asked: AnalysisOptions): S
     comparison: choice?.comparison ?? null,
     intervals: null,
     fitReport: {
-      method: "generalised least squares on the band positions, Householder QR on scaled columns",
+      method: `generalised least squares on the band positions, Householder QR on scaled columns${options.robust === null ? "" : `, robust weights (${options.robust})`}`,
       converged: fit.converged,
       reason: fit.reason,
       iterations: fit.iterations,
@@ -110,7 +110,7 @@ function qualityOf(solution: Solution): Quality {
   };
 }
 
-function bandResults({ series, model, options, used, fit, tests, treated }: Solution): BandResult[] {
+function bandResults({ series, model, options, used, fit, tests, treated, weights }: Solution): BandResult[] {
   const { calculated } = model.prepare(series.bands, options).evaluate(fit.values);
   return series.bands.map((band, i) => {
     const at = used.indexOf(band);
@@ -125,6 +125,7 @@ function bandResults({ series, model, options, used, fit, tests, treated }: Solu
       leverage: of(treated.leverage),
       leftOutResidual: of(treated.leftOut),
       used: band.use,
+      weight: weights === null ? null : of(weights),
       asRead: band.asRead,
       note: band.note,
       phase: band.phase,

@@ -1,15 +1,17 @@
 import type { Warning } from "../messages/index.ts";
-import { studentUpperTail } from "../quantity/index.ts";
-import { moreTermsCalledFor } from "./more-terms.ts";
+import { mediumMends } from "./medium.ts";
+import { oneMoreTerm } from "./more-terms.ts";
 import { IMPROBABLE, type Solution } from "./solution.ts";
+import { betterThanTerm, standsOut } from "./stands-out.ts";
 
 /** Everything the user should know about a fit: each with cause, consequence and remedy. `termsChosen`: not by the user but by the bands. */
 export function fitWarnings(solution: Solution, termsChosen: boolean): Warning[] {
   return [
     ...aboutSigma(solution),
     ...aboutChiSquare(solution),
-    ...(termsChosen ? [] : aboutTerms(solution)),
-    ...aboutBands(solution),
+    ...aboutTermsAndBands(solution, termsChosen),
+    ...aboutRobust(solution),
+    ...aboutMedium(solution),
   ];
 }
 
@@ -61,33 +63,50 @@ function aboutChiSquare({ probability, stated, excess }: Solution): Warning[] {
   ];
 }
 
-function aboutTerms(solution: Solution): Warning[] {
-  const more = moreTermsCalledFor(solution);
-  if (more === null) return [];
+/** Smooth curvature calls for a further term, a single bad band does not: one of the two is named. */
+function aboutTermsAndBands(solution: Solution, termsChosen: boolean): Warning[] {
+  const band = standsOut(solution);
+  const more = oneMoreTerm(solution);
+  const terms = solution.stated.values.length;
+  if (more?.calledFor === true && !termsChosen && !betterThanTerm(band, solution, more.solution))
+    return [
+      {
+        code: "more-terms",
+        message: `the bands call for a further constant: ${terms + 1} terms improve the fit by more than chance would (${more.step.kind} test, probability ${percent(more.step.probability)}); constants and predictions of ${terms} terms are biased; try --terms ${terms + 1} or auto`,
+      },
+    ];
+  if (band === null) return [];
+  const measure = solution.sigmaKnown ? "χ²" : "the residual sum of squares";
+  const [before, after] = [solution.stated.chiSquare, band.remaining].map((x) => x.toPrecision(3));
   return [
     {
-      code: "more-terms",
-      message: `the bands call for a further constant: ${more.terms} terms improve the fit by more than chance would (${more.test} test, probability ${percent(more.probability)}); the constants and predictions of ${more.terms - 1} terms are biased; try --terms ${more.terms}`,
+      code: "band-stands-out",
+      message: `${band.label} stands out (studentised residual ${band.studentized.toFixed(1)}); without it ${measure} falls from ${before} to ${after}, better than with a further constant: a candidate for a resonance, a misread position or a wrong label; check it, or set use: no for it and compare`,
+      about: band.label,
     },
   ];
 }
 
-/** Bands that stand out from the rest, by the two-sided residual test at 1 % with Bonferroni's correction. */
-function aboutBands({ used, tests, stated, sigmaKnown }: Solution): Warning[] {
-  if (stated.degreesOfFreedom < 2) return [];
-  const dof = sigmaKnown ? null : stated.degreesOfFreedom - 1;
-  const worst = tests.studentized.reduce<number>(
-    (best, t, i) => (Math.abs(t ?? 0) > Math.abs(tests.studentized[best] ?? 0) ? i : best),
-    0,
-  );
-  const t = tests.studentized[worst] ?? null;
-  if (t === null || 2 * studentUpperTail(Math.abs(t), dof) * used.length > 0.01) return [];
-  const { label } = used[worst]!;
+function aboutRobust({ options, weights, used }: Solution): Warning[] {
+  if (options.robust === null || weights === null) return [];
+  const low = used.filter((_, i) => weights[i]! < 0.5).map((band) => band.label);
+  const which =
+    low.length === 0 ? "no band lost half its weight" : `${low.join(", ")} lost more than half of the weight`;
   return [
     {
-      code: "band-stands-out",
-      message: `${label} stands out (studentised residual ${t.toFixed(1)}): a wrong label, a misread position, a resonance, or a model with too few terms; check the band, or set use: no for it and compare`,
-      about: label,
+      code: "robust-fit",
+      message: `the fit is robust (${options.robust}): ${which}; its uncertainties take the weights as given, so state the method and the bands when you quote it`,
+    },
+  ];
+}
+
+function aboutMedium(solution: Solution): Warning[] {
+  const other = mediumMends(solution);
+  if (other === null) return [];
+  return [
+    {
+      code: "medium-suspected",
+      message: `χ² would fall from ${solution.stated.chiSquare.toPrecision(3)} to ${other.chiSquare.toPrecision(3)} if the wavelengths were in ${other.medium}: check what the instrument reports, and say --medium ${other.medium} if so`,
     },
   ];
 }

@@ -1,21 +1,20 @@
-import { stepTest, TERM_LEVEL } from "./choice-of-terms.ts";
+import { type Step, stepTest, TERM_LEVEL } from "./choice-of-terms.ts";
 import { type Solution, trySolve } from "./solution.ts";
 
-/** Evidence that one more constant is called for. */
-export interface MoreTerms {
-  readonly terms: number;
-  /** probability that chance alone improves the fit as much */
-  readonly probability: number;
-  readonly test: "χ²-difference" | "F";
+/** The fit with one more constant, and the test of it. */
+export interface OneMore {
+  readonly solution: Solution;
+  readonly step: Step;
+  readonly calledFor: boolean;
 }
 
-/** Whether the bands call for one more term than was fitted; null when they do not, or cannot tell. */
-export function moreTermsCalledFor(solution: Solution): MoreTerms | null {
+/** The fit with one more term beside the one given; null when there is none or nothing can test it. */
+export function oneMoreTerm(solution: Solution): OneMore | null {
   const { model, series, options, stated, sigmaKnown } = solution;
   const terms = stated.values.length;
   if (model.terms === null || terms >= model.terms.most) return null;
-  const more = trySolve(series, model, { ...options, terms: terms + 1, excess: "none", scatter: null });
+  const more = trySolve(series, model, { ...options, terms: terms + 1, excess: "none", scatter: null, robust: null });
   const step = more === null ? null : stepTest(solution, more);
-  if (step === null || step.probability >= TERM_LEVEL[sigmaKnown ? "known" : "unknown"]) return null;
-  return { terms: terms + 1, probability: step.probability, test: step.kind };
+  if (more === null || step === null) return null;
+  return { solution: more, step, calledFor: step.probability < TERM_LEVEL[sigmaKnown ? "known" : "unknown"] };
 }

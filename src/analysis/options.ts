@@ -1,3 +1,4 @@
+import type { RobustKind } from "../fitting/index.ts";
 import type { ModelOptions } from "../models/index.ts";
 import type { AirConditions } from "../quantity/index.ts";
 
@@ -13,6 +14,7 @@ export interface AnalysisOptions extends ModelOptions {
   readonly scatter: number | null;
   /** a further level of intervals, printed beside the 95 % ones */
   readonly coverage: number | null;
+  readonly robust: RobustKind | null;
   readonly intervals: IntervalKind;
   readonly resamples: number;
   readonly seed: number;

@@ -16,6 +16,8 @@ export interface BandResult {
   /** observed - predicted when this band (and its repeats) is left out */
   readonly leftOutResidual: number | null;
   readonly used: boolean;
+  /** weight in a robust fit, 1 = full; null otherwise */
+  readonly weight: number | null;
   readonly asRead: AsRead;
   readonly note: string | null;
   readonly phase: string | null;

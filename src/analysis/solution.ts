@@ -5,6 +5,7 @@ import {
   diagnose,
   type ErrorModel,
   fitLinear,
+  fitRobust,
   fitWithScatter,
   type LinearFit,
   type Prepared,
@@ -44,6 +45,8 @@ export interface Solution {
   /** residual tests of `fit` */
   readonly treated: Diagnostics;
   readonly by: Propagation;
+  /** weights of a robust fit, one a used band; null otherwise */
+  readonly weights: readonly number[] | null;
 }
 
 /** χ² less probable than this is treated as excess (and more probable than 1 minus this is mentioned). */
@@ -74,6 +77,7 @@ export function solve(series: Series, model: Model, options: AnalysisOptions): S
     fit: excess.fit,
     treatment: excess.treatment,
     excess: { kind: excess.kind, value: excess.value, applied: excess.applied },
+    weights: excess.weights,
     probability,
     treated: excess.fit === stated ? tests : diagnose(excess.fit, groups),
     by: {
@@ -138,21 +142,28 @@ interface Treated {
   readonly kind: "scatter" | "birge" | "none";
   readonly value: number | null;
   readonly applied: boolean;
+  readonly weights: readonly number[] | null;
 }
 
 function treat(problem: Problem, stated: LinearFit, probability: number | null, options: AnalysisOptions): Treated {
-  if (options.scatter !== null && problem.errors.sigmas !== null) {
-    const treatment = { scatter: options.scatter, factor: 1 };
-    return { fit: fitLinear(problem, treatment), treatment, kind: "scatter", value: options.scatter, applied: true };
-  }
-  const idle = { fit: stated, treatment: UNTREATED, kind: options.excess, value: null, applied: false };
+  const none = { kind: "none", value: null, applied: false, weights: null } as const;
+  if (options.robust !== null) return { ...none, ...fitRobust(problem, options.robust) };
+  const treated = (treatment: Treatment, kind: "scatter" | "birge", value: number): Treated => ({
+    fit: fitLinear(problem, treatment),
+    treatment,
+    kind,
+    value,
+    applied: true,
+    weights: null,
+  });
+  if (options.scatter !== null && problem.errors.sigmas !== null)
+    return treated({ scatter: options.scatter, factor: 1 }, "scatter", options.scatter);
+  const idle = { ...none, fit: stated, treatment: UNTREATED, kind: options.excess };
   if (options.excess === "none" || probability === null || probability >= IMPROBABLE) return idle;
-  if (options.excess === "birge") {
-    const treatment = { scatter: 0, factor: birgeFactor(stated) };
-    return { fit: fitLinear(problem, treatment), treatment, kind: "birge", value: treatment.factor, applied: true };
-  }
-  const { tau, fit } = fitWithScatter(problem, stated);
-  return { fit, treatment: { scatter: tau, factor: 1 }, kind: "scatter", value: tau, applied: true };
+  const value = options.excess === "birge" ? birgeFactor(stated) : fitWithScatter(problem, stated).tau;
+  return options.excess === "birge"
+    ? treated({ scatter: 0, factor: value }, "birge", value)
+    : treated({ scatter: value, factor: 1 }, "scatter", value);
 }
 
 /** Data that leave together: repeats of one band. */

@@ -57,10 +57,10 @@ function tooManyCells(
   const [whole = "", decimals = ""] = cells.slice(at, at + 2);
   if (at >= 0 && /^\d+$/.test(whole) && /^\d+(\(|\s*±|\s*\+\/?-|$)/.test(decimals))
     return {
-      code: "decimal-comma",
+      code: "too-many-cells",
       place: { ...place, column: "position" },
-      what: `"${whole},${decimals}" has a decimal comma`,
-      mend: `write ${whole}.${decimals}`,
+      what: `"${whole},${decimals}" makes the row longer than its header`,
+      mend: `decimals take a point: write ${whole}.${decimals}`,
     };
   return {
     code: "too-many-cells",

@@ -36,11 +36,9 @@ export function readHeader(cells: readonly string[], place: Place, faults: Fault
     if (column !== null && columns.indexOf(column) !== i)
       fault("column-twice", `has the column "${column}" twice`, "name each column once");
   });
-  // a column under another name was named above
-  const meant = new Set([...columns, ...cells.map((cell) => guess(cell))]);
-  if (!meant.has("position"))
+  if (!columns.includes("position"))
     fault("no-position", "has no column position", "begin the table with a line such as band,position");
-  if (!meant.has("band") && !(meant.has("upper") && meant.has("lower")))
+  if (!columns.includes("band") && !(columns.includes("upper") && columns.includes("lower")))
     fault(
       "no-label",
       "has no column with the labels of the bands",

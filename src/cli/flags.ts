@@ -77,6 +77,10 @@ export const fitFlags: readonly Flag[] = [
     help: "residuals larger than σ: add a scatter, multiply σ (birge), or none (default scatter)",
   },
   { name: "scatter", value: "U", help: "added scatter in cm-1, given instead of estimated" },
+  { name: "robust", value: "KIND", help: "iteratively reweighted fit: tukey or huber" },
+  { name: "intervals", value: "KIND", help: "linear, profile or resample (default linear)" },
+  { name: "resamples", value: "N", help: "draws of --intervals resample (default 10000)" },
+  { name: "seed", value: "N", help: "of the draws (default 1)" },
   { name: "coverage", value: "P", help: "another level of intervals beside 0.95, such as 0.99" },
   { name: "up-to", value: "V", help: "highest level to predict (default three beyond the last band)" },
   {

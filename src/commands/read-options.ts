@@ -1,5 +1,6 @@
 import type { AnalysisOptions, ExcessKind, IntervalKind } from "../analysis/index.ts";
 import type { Setting, Settings } from "../bands/index.ts";
+import type { RobustKind } from "../fitting/index.ts";
 import { type Fault, nearest } from "../messages/index.ts";
 import { type Fixed, findModel, type Model, modelNames, type Notation } from "../models/index.ts";
 import { type AirConditions, readAir, readMeasurement, standardAir } from "../quantity/index.ts";
@@ -72,6 +73,7 @@ export async function readOptions(
     excess: reader.choice<ExcessKind>("excess", ["scatter", "birge", "none"], "scatter"),
     scatter: reader.number("scatter", positive, "write the added scatter in cm-1, such as 0.3"),
     coverage: reader.number("coverage", (x) => x > 0 && x < 1, "write a probability between 0 and 1, such as 0.99"),
+    robust: settings.has("robust") ? reader.choice<RobustKind>("robust", ["tukey", "huber"], "tukey") : null,
     intervals: reader.choice<IntervalKind>("intervals", ["linear", "profile", "resample"], "linear"),
     resamples:
       reader.number("resamples", whole(100, 1e7), "write a number of draws from 100 up, such as 10000") ?? 10_000,

@@ -53,6 +53,8 @@ export interface FitRequest {
   readonly scatter?: Word;
   /** another level of intervals, such as 0.99 */
   readonly coverage?: Word;
+  /** iteratively reweighted least squares: "tukey" or "huber"; @default none */
+  readonly robust?: string;
   /** how intervals are found; @default "linear" */
   readonly intervals?: string;
   /** draws of `intervals: "resample"`; @default 10000 */

@@ -7,4 +7,5 @@ export * from "./problem.ts";
 export * from "./profile.ts";
 export { inverseGram, triangularise } from "./qr.ts";
 export * from "./resampling.ts";
+export * from "./robust.ts";
 export { covarianceOf } from "./whitening.ts";

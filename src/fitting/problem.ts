@@ -39,10 +39,12 @@ export interface Problem extends Prepared {
   readonly errors: ErrorModel;
 }
 
-/** How residuals larger than the stated uncertainties are described: τ added in quadrature, or a factor on every s. */
+/** How residuals larger than the stated uncertainties are described: τ added in quadrature, a factor on every s, or weights. */
 export interface Treatment {
   readonly scatter: number;
   readonly factor: number;
+  /** of a robust fit, one a source of error: its variance is divided by it */
+  readonly weights?: readonly number[];
 }
 
 export const UNTREATED: Treatment = { scatter: 0, factor: 1 };

@@ -13,7 +13,7 @@ function variances(errors: ErrorModel, treatment: Treatment, size: number): Floa
   const sources = errors.mixing?.[0]?.length ?? size;
   return Float64Array.from({ length: sources }, (_, k) => {
     const sigma = errors.sigmas === null ? 1 : errors.sigmas[k]!;
-    return (sigma * treatment.factor) ** 2 + treatment.scatter ** 2;
+    return (sigma * treatment.factor) ** 2 / (treatment.weights?.[k] ?? 1) + treatment.scatter ** 2;
   });
 }
 

@@ -20,8 +20,8 @@ const csv: Case[] = [
   [
     "a decimal comma that makes a row longer",
     "band,position,sigma\n1-0,2885,98,0.02\n",
-    "decimal-comma",
-    'bands.csv:2 position: "2885,98" has a decimal comma; write 2885.98',
+    "too-many-cells",
+    'bands.csv:2 position: "2885,98" makes the row longer than its header; decimals take a point: write 2885.98',
   ],
   ["a negative position", "band,position\n1-0,-3\n", "position-not-positive", '"-3" is not a positive position'],
   ["a position of zero", "band,position\n1-0,0.0\n", "position-not-positive", '"0.0" is not a positive position'],
@@ -121,21 +121,21 @@ const csv: Case[] = [
   ],
   [
     "an unknown column",
-    "band,positon\n1-0,2885\n",
+    "band,position,sigam\n1-0,2885,0.1\n",
     "unknown-column",
-    'bands.csv:1: there is no column "positon" (did you mean position?); the columns are band, upper, lower',
+    'bands.csv:1: there is no column "sigam" (did you mean sigma?); the columns are band, upper, lower',
   ],
   [
     "a unit in the header",
-    "band,position (nm)\n3-0,970\n",
+    "band,position,sigma (nm)\n3-0,970,0.1\n",
     "unknown-column",
-    'there is no column "position (nm)" (did you mean position?); write position, and the unit in a line above',
+    'there is no column "sigma (nm)" (did you mean sigma?); write sigma, and the unit in a line above',
   ],
   [
     "a column under another word of the trade",
-    "band,wavenumber\n1-0,2885\n",
+    "band,position,error\n1-0,2885,0.1\n",
     "unknown-column",
-    "(did you mean position?)",
+    "(did you mean sigma?)",
   ],
   ["a column twice", "band,position,position\n1-0,1,2\n", "column-twice", 'has the column "position" twice'],
   ["a table without positions", "band,sigma\n1-0,0.1\n", "no-position", "bands.csv:1: has no column position"],
@@ -169,6 +169,13 @@ describe("what is wrong with a table is said with its place and its mend, and no
     const faults = await faultsOf(() => understand(text));
     expect(faults.map((fault) => fault.code)).toEqual([code]);
     expect(faults[0]!.text).toContain(message);
+  });
+
+  it("a column under another name is missing as well", async () => {
+    const faults = await faultsOf(() => understand("label,position (nm)\n1-0,970\n"));
+    expect(faults.map(({ code }) => code)).toEqual(["unknown-column", "unknown-column", "no-position", "no-label"]);
+    expect(faults[0]!.text).toContain("did you mean band?");
+    expect(faults[1]!.text).toContain('write position, and the unit in a line above the header, such as "# unit: nm"');
   });
 
   it("lists everything wrong together, in the order of the file", async () => {

@@ -172,6 +172,11 @@ describe("rows become series", () => {
     expect(one("1-0 5, 2-1 4").subtracted).toBe(false);
   });
 
+  it("a band of another phase may stand there unused", async () => {
+    const text = "band,position,phase,use\n1-0,2885.9,gas,\n1-0,2830,liquid,no\n";
+    expect((await understand(text)).series[0]!.bands.map((band) => band.phase)).toEqual(["gas", "liquid"]);
+  });
+
   it("the same band in two phases is fine in two series", async () => {
     const text = "band,position,phase,series\n1-0,2885.9,gas,g\n1-0,2830,liquid,l\n";
     expect((await understand(text)).series).toHaveLength(2);

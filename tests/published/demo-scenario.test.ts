@@ -57,7 +57,7 @@ describe("the demo, bond a", () => {
     within((await one(a, 4)).quality.chiSquare, 4.81, 0.005);
   });
 
-  it("read as vacuum, three terms: χ² 353 on 4, ω 3764.9", async () => {
+  it("read as vacuum, three terms: χ² 353 on 4, ω 3764.9, and the medium is suspected", async () => {
     const { quality, constants } = (await fit({ bands: a.replaceAll(" air", ""), terms: 3, excess: "none" }))
       .series[0]!;
     within(quality.chiSquare, 353, 0.5);
@@ -87,5 +87,33 @@ describe("the demo, bond b", () => {
     within(prediction(result, "6-0").position.value, 18560.9, 0.05);
     within(prediction(result, "6-0").position.standardUncertainty, 0.3, 0.05);
     within(prediction(result, "6-0").airWavelength, 538.618, 5e-4);
+  });
+});
+
+describe("the demo, number of terms chosen by the bands", () => {
+  it("three for a, with four refused", async () => {
+    const { terms, comparison, warnings } = (await fit({ bands: a, terms: "auto" })).series[0]!;
+    expect(terms).toBe(3);
+    expect(comparison!.map((row) => [row.terms, row.chosen])).toEqual([2, 3, 4, 5, 6].map((n) => [n, n === 3]));
+    expect(warnings.map(({ code }) => code)).not.toContain("band-stands-out");
+  });
+
+  it("two for b, with 3-0 named and no term bought by it; without 3-0 two terms pass", async () => {
+    const all = (await fit({ bands: b, terms: "auto" })).series[0]!;
+    expect(all.terms).toBe(2);
+    expect(all.warnings.find(({ code }) => code === "band-stands-out")?.about).toBe("3-0");
+    const rest = (await fit({ bands: b.replace(" 3-0 993.985(10) nm air,", ""), terms: "auto" })).series[0]!;
+    expect(rest.terms).toBe(2);
+    expect(rest.quality.excess.applied).toBe(false);
+  });
+
+  it("a robust fit of b sets 3-0 aside and lands on the fit without it", async () => {
+    const robust = (await fit({ bands: b, robust: "tukey" })).series[0]!;
+    expect(robust.bands[2]!.weight).toBeLessThan(1e-3);
+    const rest = (await fit({ bands: b.replace(" 3-0 993.985(10) nm air,", "") })).series[0]!;
+    // Tukey's weights of the four good bands stay near 1: within a tenth of a standard uncertainty
+    for (const key of ["we", "wexe"])
+      within(robust.constants[key]!.value, rest.constants[key]!.value, 0.3 * rest.constants[key]!.standardUncertainty!);
+    expect(robust.warnings.find(({ code }) => code === "robust-fit")?.message).toContain("3-0");
   });
 });
