@@ -23,7 +23,7 @@ const LEVELS_BEYOND = 3;
  * Throws InputError with exit 3 when the bands do not determine the constants.
  */
 export function analyse(series: Series, model: Model, asked: AnalysisOptions): SeriesResult {
-  const choice = asked.autoTerms && model.terms !== null ? chooseTerms(series, model, asked) : null;
+  const choice = wantsChoice(series, model, asked) ? chooseTerms(series, model, asked) : null;
   const options = choice === null ? asked : { ...asked, terms: choice.terms };
   const solution = solve(series, model, options);
   const { fit, by } = solution;
@@ -73,6 +73,14 @@ export function analyse(series: Series, model: Model, asked: AnalysisOptions): S
       ...aboutWell(well, p, series, options, y00 !== null),
     ],
   });
+}
+
+/** The bands choose when asked to, and by default where they can: σ known and a degree of freedom left beside the least number. */
+function wantsChoice(series: Series, model: Model, { autoTerms, terms, fixed, robust }: AnalysisOptions): boolean {
+  if (model.terms === null || autoTerms) return model.terms !== null;
+  if (terms !== null || Object.keys(fixed).length > 0 || robust !== null) return false;
+  const used = series.bands.filter((band) => band.use);
+  return used.every((band) => band.sigma !== null) && used.length > model.terms.least;
 }
 
 const unit = (size: number, at: number) => Array.from({ length: size }, (_, k) => (k === at ? 1 : 0));

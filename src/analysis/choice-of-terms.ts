@@ -29,7 +29,9 @@ export interface Step {
  * better, so that a single perturbed band does not buy a term. null when the bands do not determine the least number.
  */
 export function chooseTerms(series: Series, model: Model, options: AnalysisOptions): Choice | null {
-  const { least, most } = model.terms!;
+  // Constants held or known from elsewhere are in any case among the terms.
+  const least = model.prepare([], { ...options, terms: model.terms!.least }).parameters.length;
+  const { most } = model.terms!;
   const fits: Solution[] = [];
   for (let terms = least; terms <= most; terms++) {
     const solution = trySolve(series, model, { ...options, terms, excess: "none", scatter: null, robust: null });

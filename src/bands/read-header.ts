@@ -19,6 +19,20 @@ const MEANT: Readonly<Record<string, ColumnName>> = {
   remark: "note",
 };
 
+/** Columns that a report adds to its bands.csv: left aside when that file is read again. */
+const RESULT_COLUMNS: ReadonlySet<string> = new Set([
+  "calculated",
+  "residual",
+  "studentized_residual",
+  "leverage",
+  "left_out_residual",
+  "weight",
+  "as_read",
+  "as_read_sigma",
+  "as_read_unit",
+  "as_read_medium",
+]);
+
 /** The columns a header names, null for one that is none; what is wrong is added to `faults`. */
 export function readHeader(cells: readonly string[], place: Place, faults: Fault[]): (ColumnName | null)[] {
   const fault = (code: string, what: string, mend: string) => faults.push({ code, place, what, mend });
@@ -29,7 +43,7 @@ export function readHeader(cells: readonly string[], place: Place, faults: Fault
     return columns;
   }
   cells.forEach((cell, i) => {
-    if (columns[i] !== null || cell === "") return;
+    if (columns[i] !== null || cell === "" || RESULT_COLUMNS.has(tidy(cell))) return;
     fault(...unknownColumn(cell));
   });
   columns.forEach((column, i) => {

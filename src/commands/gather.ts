@@ -8,7 +8,7 @@ import {
   toSeries,
   type Understood,
 } from "../bands/index.ts";
-import { type Fault, InputError, type Warning } from "../messages/index.ts";
+import { type Fault, formatFault, InputError, type Warning } from "../messages/index.ts";
 import { type ReadOptions, readOptions } from "./read-options.ts";
 import { type FitRequest, requestSettings } from "./request.ts";
 
@@ -35,7 +35,7 @@ export async function gather(request: FitRequest): Promise<Gathered> {
     ...more,
     ...(options === null || result === null ? [] : result.series.flatMap((s) => options.model.check(s))),
   ];
-  if (wrong.length > 0 || options === null || result === null) throw new InputError(wrong);
+  if (wrong.length > 0 || options === null || result === null) throw new InputError(distinct(wrong));
   return { settings, series: result.series, options, warnings: result.warnings };
 }
 
@@ -75,6 +75,11 @@ function bandsOf(settings: Settings, flags: Settings, file: Awaited<ReturnType<t
         )
       : rowsFromBands(setting.value, setting.place);
   return toSeries(rows, settings);
+}
+
+/** The same fault may be seen from two sides (a setting read by bands and fit). */
+function distinct(faults: readonly Fault[]): Fault[] {
+  return [...new Map(faults.map((fault) => [formatFault(fault), fault])).values()];
 }
 
 /** Run a step that may throw InputError of exit 2, and keep its faults. */

@@ -39,7 +39,7 @@ export interface FitRequest {
   readonly name?: string;
   /** @default "oscillator" */
   readonly model?: string;
-  /** number of constants, 2 to 6; @default 2 */
+  /** number of constants, 2 to 6, or "auto"; @default auto when σ is known and a degree of freedom is left, else 2 */
   readonly terms?: Word;
   /** constants held, such as "weye=0.22"; with an uncertainty one more observation */
   readonly fix?: string;

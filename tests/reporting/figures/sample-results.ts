@@ -62,7 +62,12 @@ export function sampleResult(sample: Sample = {}): SeriesResult {
   const factor = known ? 1 : freedom > 0 ? square / freedom : 1;
   const covariance = inverse.map((line) => line.map((c) => c * factor));
   const quantity = (value: number, gradient: readonly number[], unit = "cm-1"): Quantity => {
-    const u = Math.sqrt(dot(gradient, covariance.map((line) => dot(line, gradient))));
+    const u = Math.sqrt(
+      dot(
+        gradient,
+        covariance.map((line) => dot(line, gradient)),
+      ),
+    );
     return { value, standardUncertainty: u, interval95: [value - 1.96 * u, value + 1.96 * u], unit };
   };
   const unit = (at: number) => keys.map((_, k) => (k === at ? 1 : 0));
@@ -72,21 +77,23 @@ export function sampleResult(sample: Sample = {}): SeriesResult {
     interval95: null,
     unit: unitName,
   });
-  const bands = data.map(({ label, gradient, u, observed, used: isUsed }, i): BandResult => ({
-    label,
-    observed,
-    calculated: dot(gradient, p),
-    residual: observed - dot(gradient, p),
-    standardUncertainty: u,
-    studentizedResidual: sample.flagged?.includes(label) ? 4.2 : 0.5,
-    leverage: 0.3,
-    leftOutResidual: null,
-    used: isUsed,
-    asRead: { text: String(observed), unit: "cm-1", medium: "vacuum", sigmaText: null },
-    note: null,
-    phase: null,
-    place: { source: "sample.csv", line: i + 2 },
-  }));
+  const bands = data.map(
+    ({ label, gradient, u, observed, used: isUsed }, i): BandResult => ({
+      label,
+      observed,
+      calculated: dot(gradient, p),
+      residual: observed - dot(gradient, p),
+      standardUncertainty: u,
+      studentizedResidual: sample.flagged?.includes(label) ? 4.2 : 0.5,
+      leverage: 0.3,
+      leftOutResidual: null,
+      used: isUsed,
+      asRead: { text: String(observed), unit: "cm-1", medium: "vacuum", sigmaText: null },
+      note: null,
+      phase: null,
+      place: { source: "sample.csv", line: i + 2 },
+    }),
+  );
   const top = Math.max(...used.map(({ upper }) => upper));
   const zero = dot(row(0), p);
   const [w, x] = [p[0]!, p[1]!];
