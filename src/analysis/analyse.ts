@@ -5,6 +5,7 @@ import type { Model, Well } from "../models/index.ts";
 import { chooseTerms } from "./choice-of-terms.ts";
 import { derivedNumbers, highestLevel } from "./derived.ts";
 import { dissociationRows } from "./dissociation/rows.ts";
+import { withEmpirical } from "./empirical/with-empirical.ts";
 import { fitWarnings } from "./fit-warnings.ts";
 import { refineIntervals } from "./intervals.ts";
 import type { AnalysisOptions } from "./options.ts";
@@ -32,6 +33,7 @@ export function analyse(series: Series, model: Model, asked: AnalysisOptions): S
   const reducedMass = series.bond?.reducedMass ?? null;
   const top = Math.max(...solution.used.map((band) => model.levels(band.label).upper));
   const y00 = y00Of(well, p, options, reducedMass);
+  const empirical = withEmpirical(dissociationRows(solution, well, top, y00?.value ?? 0), solution, well, top);
   const bands = bandResults(solution);
   const { predictions, warnings } = predictionsOf(solution, well, top);
   const free = solution.stated.keys.flatMap((key, k) => (options.fixed[key]?.sigma === null ? [] : [k]));
@@ -53,7 +55,7 @@ export function analyse(series: Series, model: Model, asked: AnalysisOptions): S
     ...correlationOf(fit.keys, free, fit.covariance),
     quality: qualityOf(solution),
     bands,
-    dissociation: dissociationRows(solution, well, top, y00?.value ?? 0),
+    dissociation: empirical.rows,
     derived: derivedNumbers(well, p, by, reducedMass, y00),
     predictions,
     stability: stabilityRows(solution),
@@ -69,6 +71,7 @@ export function analyse(series: Series, model: Model, asked: AnalysisOptions): S
       ...series.warnings,
       ...(choice?.warnings ?? []),
       ...fitWarnings(solution, choice !== null),
+      ...empirical.warnings,
       ...warnings,
       ...aboutWell(well, p, series, options, y00 !== null),
     ],

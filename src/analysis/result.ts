@@ -1,6 +1,7 @@
 import type { AsRead } from "../bands/index.ts";
 import type { Place, Warning } from "../messages/index.ts";
 import type { Quantity } from "../quantity/index.ts";
+import type { EmpiricalError } from "./empirical/empirical-error.ts";
 
 /** One band beside its calculated position; cm-1, vacuum. */
 export interface BandResult {
@@ -35,6 +36,8 @@ export interface DissociationRow {
   readonly converted: Readonly<Record<"kJ/mol" | "kcal/mol" | "eV", readonly [number, number | null]>> | null;
   /** the caution that belongs to this row; for a null row the reason */
   readonly note: string | null;
+  /** on rows of the Morse form: what reference wells say of it; null where none reach this coverage (a warning says why) */
+  readonly empirical?: EmpiricalError | null;
 }
 
 export interface Prediction {

@@ -63,7 +63,9 @@ export function solve(series: Series, model: Model, options: AnalysisOptions): S
   const probability = sigmaKnown && dof > 0 ? chiSquareUpperTail(stated.chiSquare, dof) : null;
   const excess = treat(problem, stated, probability, options);
   const groups = repeats(used);
-  const tests = diagnose(stated, groups);
+  // Residual tests cost as much as the fit, and many solutions are made only for their χ².
+  const tests = once(() => diagnose(stated, groups));
+  const treated = once(() => (excess.fit === stated ? tests() : diagnose(excess.fit, groups)));
   const estimated = !sigmaKnown || (excess.applied && options.scatter === null);
   return {
     series,
@@ -73,18 +75,31 @@ export function solve(series: Series, model: Model, options: AnalysisOptions): S
     errors,
     sigmaKnown,
     stated,
-    tests,
+    get tests() {
+      return tests();
+    },
+    get treated() {
+      return treated();
+    },
     fit: excess.fit,
     treatment: excess.treatment,
     excess: { kind: excess.kind, value: excess.value, applied: excess.applied },
     weights: excess.weights,
     probability,
-    treated: excess.fit === stated ? tests : diagnose(excess.fit, groups),
     by: {
       covariance: excess.fit.covariance,
       degreesOfFreedom: estimated ? dof : null,
       coverage: options.coverage,
     },
+  };
+}
+
+/** A value made when it is first asked for. */
+function once<T>(make: () => T): () => T {
+  let made: { readonly value: T } | null = null;
+  return () => {
+    made ??= { value: make() };
+    return made.value;
   };
 }
 

@@ -16,7 +16,7 @@ export interface Explanation {
 export const standardAir: AirConditions = { temperatureC: 15, pressurePa: 101325 };
 
 /** Vacuum wavelengths in nm between which the dispersion formula was fitted (Ciddor 1996). */
-export const airLimits = { shortestNm: 230, longestNm: 1690 } as const;
+const airLimits = { shortestNm: 230, longestNm: 1690 } as const;
 
 const kelvinAtZero = 273.15;
 

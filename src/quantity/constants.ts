@@ -27,7 +27,7 @@ export const hartree = 4.359744722206e-18;
 export const bohr = 5.29177210544e-11;
 
 /** Thermochemical calorie in J, exact by definition. */
-export const calorie = 4.184;
+const calorie = 4.184;
 
 /** Energy of 1 cm-1 in J: h·c·100. */
 export const wavenumberInJoule = planck * speedOfLight * 100;

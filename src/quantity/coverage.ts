@@ -54,7 +54,8 @@ function twoSidedQuantile(alpha: number, degreesOfFreedom: number | null): numbe
     const move = (Math.log(tail / alpha) * tail) / (2 * x * density(x, nu));
     const limited = Math.max(-3, Math.min(3, move));
     x *= Math.exp(limited);
-    if (Math.abs(limited) < 1e-15) break;
+    // the error after a step is about the square of that step
+    if (Math.abs(limited) < 1e-9) break;
   }
   return x;
 }

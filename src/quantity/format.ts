@@ -17,7 +17,7 @@ export function decimalsFor(u: number): number {
   const leading = leadingExponent(u);
   // rounding may carry into a new first digit: 0.0995 → 0.100, which is one digit too many
   const carried = leadingExponent(Number(roundDecimal(u, 1 - leading))) > leading;
-  return carried ? -leading : 1 - leading;
+  return (carried ? 0 : 1) - leading;
 }
 
 /**

@@ -36,6 +36,7 @@ function continuedFraction(b0: number, term: (i: number) => readonly [a: number,
 /** Upper regularised incomplete gamma function Q(a, x) for a > 0, x ≥ 0. */
 export function upperGamma(a: number, x: number): number {
   if (x <= 0) return 1;
+  if (x === Number.POSITIVE_INFINITY) return 0;
   const front = Math.exp(a * Math.log(x) - x - logGamma(a));
   if (front === 0) return x > a ? 0 : 1;
   if (x > a + 1) return front / continuedFraction(x + 1 - a, (i) => [-i * (i - a), x + 2 * i + 1 - a]);

@@ -20,7 +20,10 @@ const ofHydrogen: Readonly<Record<string, number>> = { H: 1, D: 2, T: 3 };
  */
 export function readAtom(text: string): Atom | Explanation {
   const [, number = "", letters = ""] = /^(\d*)([A-Za-z]+)$/u.exec(text.trim().normalize("NFKC")) ?? [];
-  if (letters === "") return { what: `"${text}" is not an atom`, mend: "write an isotope such as 35Cl" };
+  if (letters === "") {
+    const [, symbol, after] = /^([A-Za-z]+)-?(\d+)$/u.exec(text.trim()) ?? [];
+    return { what: `"${text}" is not an atom`, mend: `write an isotope such as ${after ?? 35}${symbol ?? "Cl"}` };
+  }
   const isotopeOfHydrogen = Object.hasOwn(ofHydrogen, letters) ? ofHydrogen[letters] : undefined;
   if (isotopeOfHydrogen !== undefined && letters !== "H" && number !== "") {
     return { what: `"${text}" names a mass number twice`, mend: `write ${letters} or ${isotopeOfHydrogen}H` };

@@ -12,6 +12,12 @@ const mend = "write two atoms such as 1H 35Cl";
  * (m − q·m_e, 5e-4 u each): give its reduced mass instead.
  */
 export function readBond(text: string): Bond | Explanation {
+  if (/\p{L}\d*[+\-−⁺⁻]$/u.test(text.trim())) {
+    return {
+      what: `"${text.trim()}" carries a charge`,
+      mend: "write neutral atoms such as 1H 35Cl, or give the reduced mass",
+    };
+  }
   const words = text
     .trim()
     .split(/[\s,;·\-‐‑–−]+/u)
