@@ -31,7 +31,9 @@ await build({
   keepNames: false,
   legalComments: "none",
   chunkNames: "parts/[name]-[hash]",
-  banner: { js: 'import{createRequire as bundledRequire}from"node:module";const require=bundledRequire(import.meta.url);' },
+  banner: {
+    js: 'import{createRequire as bundledRequire}from"node:module";const require=bundledRequire(import.meta.url);',
+  },
   external: ["@napi-rs/canvas"],
   plugins: [canvasStandIn],
 });
@@ -44,6 +46,15 @@ copyFileSync(join(arimo, "400Regular_Italic/Arimo_400Regular_Italic.ttf"), "dist
 copyFileSync(join(arimo, "LICENSE_FONT"), "dist/fonts/LICENSE");
 
 const tsc = join(dirname(require.resolve("typescript/package.json")), "bin/tsc");
-const types = ["--emitDeclarationOnly", "--declaration", "--noEmit", "false", "--outDir", "dist/types", "--rootDir", "src"];
+const types = [
+  "--emitDeclarationOnly",
+  "--declaration",
+  "--noEmit",
+  "false",
+  "--outDir",
+  "dist/types",
+  "--rootDir",
+  "src",
+];
 const { status } = spawnSync(process.execPath, [tsc, "-p", ".ci/types.json", ...types], { stdio: "inherit" });
 process.exitCode = status ?? 1;

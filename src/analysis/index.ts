@@ -1,6 +1,6 @@
 export { analyse } from "./analyse.ts";
 export type { AnalysisOptions, ExcessKind, IntervalKind } from "./options.ts";
 export { predict } from "./predictions.ts";
-export { type Propagation, propagate, quantityFrom } from "./propagation.ts";
+export type { Propagation } from "./propagation.ts";
 export type * from "./result.ts";
 export { turningPoint } from "./turning-point.ts";

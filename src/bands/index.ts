@@ -1,5 +1,5 @@
 export * from "./label.ts";
-export type { RawInput, RawRow } from "./raw.ts";
+export type { RawRow } from "./raw.ts";
 export { rowsFromBands, rowsFromSeries } from "./read-flags.ts";
 export { formatOf, type InputFormat, readInput } from "./read-input.ts";
 export type * from "./series.ts";

@@ -65,7 +65,11 @@ export const moleculeFlags: readonly Flag[] = [
 /** How the fit is made. */
 export const fitFlags: readonly Flag[] = [
   { name: "model", value: "NAME", help: "oscillator (default)" },
-  { name: "terms", value: "N", help: "number of constants, 2 to 6, or auto: what the bands support (default auto when σ is known, else 2: Morse)" },
+  {
+    name: "terms",
+    value: "N",
+    help: "number of constants, 2 to 6, or auto: what the bands support (default auto when σ is known, else 2: Morse)",
+  },
   {
     name: "fix",
     value: '"weye=0.22"',

@@ -54,7 +54,10 @@ export function parse(
     const entry = catalogue.find(({ name }) => name === command.name());
     if (entry !== undefined) describe(command, entry);
   });
-  return program.parseAsync(words as string[], { from: "user" }).then(() => chosen);
+  // `help fit` skips the hook that describes a command, `fit --help` does not.
+  const [first, second] = words;
+  const asked = first === "help" && second !== undefined ? [second, "--help"] : words;
+  return program.parseAsync(asked as string[], { from: "user" }).then(() => chosen);
 }
 
 function describe(command: Command, entry: Entry): void {

@@ -34,8 +34,3 @@ export function modelPhrase(series: readonly SeriesResult[], { notation }: Figur
   if (distinct.length === 1) return distinct[0]!;
   return listed(series.map(({ name }, i) => `${phrases[i]} for ${name}`));
 }
-
-/** The file name stem is fixed; several series share one picture. */
-export function namesPhrase(series: readonly SeriesResult[]): string {
-  return listed(series.map(({ name }) => name));
-}

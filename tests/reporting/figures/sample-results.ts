@@ -87,6 +87,7 @@ export function sampleResult(sample: Sample = {}): SeriesResult {
       studentizedResidual: sample.flagged?.includes(label) ? 4.2 : 0.5,
       leverage: 0.3,
       leftOutResidual: null,
+      weight: null,
       used: isUsed,
       asRead: { text: String(observed), unit: "cm-1", medium: "vacuum", sigmaText: null },
       note: null,
@@ -160,6 +161,8 @@ export function sampleResult(sample: Sample = {}): SeriesResult {
         observed: used.some((d) => d.label === label),
       };
     }),
+    comparison: null,
+    intervals: null,
     stability: [],
     fitReport: { method: "QR", converged: true, reason: "linear", iterations: 1 },
     warnings: [],

@@ -1,0 +1,122 @@
+import type { SeriesResult } from "../../analysis/index.ts";
+import { counted, modelPhrase, seriesPhrase } from "./captions.ts";
+import { compose, heightFor } from "./compose.ts";
+import type { FigureSpec, Point, Trace } from "./figure-spec.ts";
+import { levelsOf } from "./levels.ts";
+import type { FigureOptions } from "./options.ts";
+import { GREY, SIZE, seriesStyle } from "./style.ts";
+import { plain, quotient, SYMBOL, UNIT } from "./symbols.ts";
+import { shortened } from "./text-width.ts";
+import { paddedRange } from "./ticks.ts";
+
+/** Several series stand this far apart at the same v. */
+const APART = 0.12;
+
+/** Observed minus calculated positions against v′ with their stated uncertainties; null when no band has a calculated position. */
+export function residualsFigure(series: readonly SeriesResult[], options: FigureOptions): FigureSpec | null {
+  const all = series.map((one, i) => pointsOf(one, (i - (series.length - 1) / 2) * APART));
+  const largest = Math.max(...all.flat().flatMap(({ used, y, yError = 0 }) => (used ? [Math.abs(y) + yError] : [])));
+  // A band that was not fitted may lie anywhere; it must not press the others flat.
+  const drawn = all.map((points) => points.filter(({ used, y }) => used || Math.abs(y) <= 1.5 * largest));
+  const points = drawn.flat();
+  if (points.length === 0) return null;
+  const beyond = all.flat().length - points.length;
+  const right = Math.max(...points.map(({ x }) => x)) + 0.6;
+  const reach = points.flatMap(({ y, yError = 0 }) => [y - yError, y + yError, 0]);
+  const traces: Trace[] = [
+    {
+      kind: "line",
+      name: null,
+      colour: GREY,
+      widthPt: SIZE.thin,
+      dashPt: [],
+      points: [
+        { x: 0.4, y: 0 },
+        { x: right, y: 0 },
+      ],
+    },
+    ...drawn.flatMap((some, i) => tracesOf(some, i, series.length > 1 ? series[i]!.name : null)),
+  ];
+  const [low, high] = paddedRange(reach, 0.14);
+  return compose(
+    {
+      name: "residuals",
+      widthMm: options.widthMm,
+      heightMm: heightFor(options.widthMm, 0.8),
+      caption: caption(series, options, points, beyond),
+      alt: alt(series, points),
+    },
+    [
+      {
+        tag: null,
+        weight: 1,
+        x: { label: SYMBOL.upperLevel, range: [0.4, right], least: 1 },
+        y: { label: quotient(SYMBOL.observedMinusCalculated, UNIT.wavenumber), range: [low, high] },
+        traces,
+        texts: points
+          .filter(({ flagged }) => flagged)
+          .map(({ x, y, yError = 0, label }) => ({
+            x,
+            y: y >= 0 ? y + yError + 0.02 * (high - low) : y - yError - 0.02 * (high - low),
+            runs: plain(label),
+            align: "center" as const,
+            baseline: y >= 0 ? ("bottom" as const) : ("top" as const),
+          })),
+        legend: series.length > 1,
+      },
+    ],
+  );
+}
+
+interface Residual extends Point {
+  readonly used: boolean;
+  readonly flagged: boolean;
+  readonly label: string;
+}
+
+function pointsOf({ bands, warnings }: SeriesResult, shift: number): Residual[] {
+  const named = new Set(warnings.filter(({ code }) => code === "band-stands-out").map(({ about }) => about));
+  return bands.flatMap(({ label, residual, standardUncertainty: u, used }) => {
+    const levels = levelsOf(label);
+    if (levels === null || residual === null) return [];
+    // Hot bands stand a little to the right of the overtone with the same upper level.
+    const x = levels.upper + shift + (levels.lower > 0 ? 0.25 : 0);
+    const flagged = used && named.has(label);
+    return [{ x, y: residual, used, flagged, label, ...(u === null ? {} : { yError: u }) }];
+  });
+}
+
+function tracesOf(points: readonly Residual[], index: number, name: string | null): Trace[] {
+  const { colour, marker } = seriesStyle(index);
+  const label = name === null ? null : shortened(name, 90, SIZE.small);
+  return [true, false].flatMap((filled): Trace[] => {
+    const some = points.filter(({ used }) => used === filled);
+    if (some.length === 0) return [];
+    const plainPoints = some.map(({ x, y, yError }) => ({ x, y, ...(yError === undefined ? {} : { yError }) }));
+    return [
+      { kind: "points", name: filled ? label : null, colour, marker, filled, sizePt: SIZE.marker, points: plainPoints },
+    ];
+  });
+}
+
+function caption(
+  series: readonly SeriesResult[],
+  options: FigureOptions,
+  points: readonly Residual[],
+  beyond: number,
+): string {
+  const known = points.some(({ yError }) => yError !== undefined);
+  const hollow = points.some(({ used }) => !used) ? "; hollow: bands not used in the fit" : "";
+  const flagged = points.some((point) => point.flagged) ? " Bands that stand out by the residual test are named." : "";
+  return [
+    `Residuals, observed minus calculated, against the upper level v′ for ${seriesPhrase(series)},`,
+    `fitted by ${modelPhrase(series, options)}.`,
+    `Bars: ${known ? "stated standard uncertainties" : "none, as no uncertainties were stated"}${hollow}.${flagged}`,
+    ...(beyond > 0 ? [`${counted(beyond, "unused band")} outside the frame.`] : []),
+  ].join(" ");
+}
+
+function alt(series: readonly SeriesResult[], points: readonly Residual[]): string {
+  const largest = Math.max(...points.filter(({ used }) => used).map(({ y }) => Math.abs(y)));
+  return `Residuals of ${counted(series.length, "series").replace("seriess", "series")} against the upper level; the largest of a used band is ${largest.toPrecision(2)} cm⁻¹.`;
+}
