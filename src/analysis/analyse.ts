@@ -8,6 +8,7 @@ import { dissociationRows } from "./dissociation/rows.ts";
 import { withEmpirical } from "./empirical/with-empirical.ts";
 import { fitWarnings } from "./fit-warnings.ts";
 import { refineIntervals } from "./intervals.ts";
+import { followLimit } from "./near-limit/follow-limit.ts";
 import type { AnalysisOptions } from "./options.ts";
 import { predict } from "./predictions.ts";
 import { propagate } from "./propagation.ts";
@@ -23,20 +24,17 @@ const LEVELS_BEYOND = 3;
  * Fit one series and derive everything that follows. Pure; units as in SeriesResult.
  * Throws InputError with exit 3 when the bands do not determine the constants.
  */
-export function analyse(series: Series, model: Model, asked: AnalysisOptions): SeriesResult {
+export function analyse(series: Series, model: Model, given: AnalysisOptions): SeriesResult {
+  const reducedMass = series.bond?.reducedMass ?? null;
+  const asked = model.limit === undefined ? given : { ...given, reducedMass };
   const choice = wantsChoice(series, model, asked) ? chooseTerms(series, model, asked) : null;
   const options = choice === null ? asked : { ...asked, terms: choice.terms };
   const solution = solve(series, model, options);
-  const { fit, by } = solution;
+  const { fit, by, linear } = solution;
   const p = fit.values;
-  const well = model.well!(p);
-  const reducedMass = series.bond?.reducedMass ?? null;
-  const top = Math.max(...solution.used.map((band) => model.levels(band.label).upper));
-  const y00 = y00Of(well, p, options, reducedMass);
-  const empirical = withEmpirical(dissociationRows(solution, well, top, y00?.value ?? 0), solution, well, top);
-  const bands = bandResults(solution);
-  const { predictions, warnings } = predictionsOf(solution, well, top);
+  const { parameters } = model.prepare([], options);
   const free = solution.stated.keys.flatMap((key, k) => (options.fixed[key]?.sigma === null ? [] : [k]));
+  const { first, warnings, ...follows } = whatFollows(solution);
   return refineIntervals(solution, {
     name: series.name,
     model: model.name,
@@ -47,35 +45,66 @@ export function analyse(series: Series, model: Model, asked: AnalysisOptions): S
       fit.keys.map((key, k) => [
         key,
         free.includes(k)
-          ? propagate(p[k]!, unit(p.length, k), "cm-1", by)
-          : { value: p[k]!, standardUncertainty: null, interval95: null, unit: "cm-1" },
+          ? propagate(p[k]!, unit(p.length, k), parameters[k]!.unit, by)
+          : { value: p[k]!, standardUncertainty: null, interval95: null, unit: parameters[k]!.unit },
       ]),
     ),
     held: fit.keys.filter((_, k) => !free.includes(k)),
     ...correlationOf(fit.keys, free, fit.covariance),
     quality: qualityOf(solution),
-    bands,
-    dissociation: empirical.rows,
-    derived: derivedNumbers(well, p, by, reducedMass, y00),
-    predictions,
-    stability: stabilityRows(solution),
+    bands: bandResults(solution),
+    ...follows,
     comparison: choice?.comparison ?? null,
     intervals: null,
     fitReport: {
-      method: `generalised least squares on the band positions, Householder QR on scaled columns${options.robust === null ? "" : `, robust weights (${options.robust})`}`,
+      method: `${linear ? LINEAR_METHOD : NONLINEAR_METHOD}${options.robust === null ? "" : `, robust weights (${options.robust})`}`,
       converged: fit.converged,
       reason: fit.reason,
       iterations: fit.iterations,
     },
     warnings: [
+      ...first,
       ...series.warnings,
       ...(choice?.warnings ?? []),
-      ...fitWarnings(solution, choice !== null),
-      ...empirical.warnings,
+      // Where the law itself is refused, no single band is to blame.
+      ...fitWarnings(solution, choice !== null).filter(({ code }) => first.length === 0 || code !== "band-stands-out"),
       ...warnings,
-      ...aboutWell(well, p, series, options, y00 !== null),
     ],
   });
+}
+
+const LINEAR_METHOD = "generalised least squares on the band positions, Householder QR on scaled columns";
+const NONLINEAR_METHOD =
+  "generalised least squares on the band positions, damped Gauss-Newton steps (Levenberg-Marquardt), Householder QR for the last ones";
+
+/** What a model lets one conclude beyond its constants. `first`: warnings that are headlines. */
+type Follows = Pick<SeriesResult, "dissociation" | "derived" | "predictions" | "stability" | "warnings"> & {
+  readonly first: readonly Warning[];
+};
+
+/** The model is asked what it can do: a well, a law of the limit, or constants alone. */
+function whatFollows(solution: Solution): Follows {
+  const { model, fit } = solution;
+  const none = { dissociation: [], derived: null, predictions: [], stability: [], warnings: [], first: [] };
+  if (model.well !== undefined) return { ...none, ...followWell(solution, model.well(fit.values)) };
+  return model.limit === undefined ? none : { ...none, ...followLimit(solution, model.limit) };
+}
+
+function followWell(solution: Solution, well: Well): Omit<Follows, "first"> {
+  const { series, model, options, fit, by } = solution;
+  const p = fit.values;
+  const reducedMass = series.bond?.reducedMass ?? null;
+  const top = Math.max(...solution.used.map((band) => model.levels(band.label).upper));
+  const y00 = y00Of(well, p, options, reducedMass);
+  const empirical = withEmpirical(dissociationRows(solution, well, top, y00?.value ?? 0), solution, well, top);
+  const { predictions, warnings } = predictionsOf(solution, well, top);
+  return {
+    dissociation: empirical.rows,
+    derived: derivedNumbers(well, p, by, reducedMass, y00),
+    predictions,
+    stability: stabilityRows(solution),
+    warnings: [...empirical.warnings, ...warnings, ...aboutWell(well, p, series, options, y00 !== null)],
+  };
 }
 
 /** The bands choose when asked to, and by default where they can: σ known and a degree of freedom left beside the least number. */

@@ -55,6 +55,7 @@ export function chooseTerms(series: Series, model: Model, options: AnalysisOptio
 
 /** The test of one more constant; null when nothing is left to test it with. */
 export function stepTest(fewer: Solution, more: Solution): Step | null {
+  if (!fewer.sigmaKnown && fewer.stated.exact) return null;
   const gain = Math.max(0, fewer.stated.chiSquare - more.stated.chiSquare);
   if (fewer.sigmaKnown) {
     if (fewer.stated.degreesOfFreedom < 1) return null;

@@ -31,6 +31,12 @@ function aboutSigma({ sigmaKnown, fit, by, options }: Solution): Warning[] {
         ? "as many constants as bands: the fit goes through every band and nothing tests the model; add a band"
         : "as many constants as bands and no σ: the fit goes through every band and no uncertainty can be had; add a band or give --sigma",
     });
+  else if (!sigmaKnown && fit.exact)
+    warnings.push({
+      code: "residuals-are-rounding",
+      message:
+        "the model goes through every band to rounding, so the residuals say nothing of the uncertainty and none is given; if the bands were calculated from constants that is why, otherwise give --sigma",
+    });
   else if (!sigmaKnown)
     warnings.push({
       code: "sigma-from-residuals",

@@ -1,4 +1,5 @@
 export { analyse } from "./analyse.ts";
+export { labelsWithin } from "./near-limit/levels.ts";
 export type { AnalysisOptions, ExcessKind, IntervalKind } from "./options.ts";
 export { predict } from "./predictions.ts";
 export type { Propagation } from "./propagation.ts";

@@ -58,6 +58,8 @@ export function refineIntervals(solution: Solution, result: SeriesResult): Serie
     }),
   );
   const dissociation = result.dissociation.map((row) => {
+    // There the limit is one of the constants.
+    if (row.method === "near-limit") return row.d0 === null ? row : { ...row, d0: constants[limitKey(solution)]! };
     if (row.method !== "morse" || row.d0 === null || row.de === null) return row;
     const de = apply({ key: "De", scalar: morseScalar(well, false) }, row.de, false);
     return {
@@ -84,6 +86,8 @@ export function refineIntervals(solution: Solution, result: SeriesResult): Serie
     warnings: [...result.warnings, ...warnings],
   };
 }
+
+const limitKey = ({ model, fit }: Solution) => fit.keys[model.limit!.energy]!;
 
 /** Y00 is added to De as a constant; the interval found without it moves along. */
 function shifted(

@@ -153,7 +153,8 @@ export interface SeriesResult {
   readonly quality: Quality;
   readonly bands: readonly BandResult[];
   readonly dissociation: readonly DissociationRow[];
-  readonly derived: Derived;
+  /** null for models without a well around the minimum */
+  readonly derived: Derived | null;
   readonly predictions: readonly Prediction[];
   readonly stability: readonly StabilityRow[];
   /** with --terms auto: the numbers of terms compared; otherwise null */

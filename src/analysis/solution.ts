@@ -17,7 +17,9 @@ import {
 import { InputError } from "../messages/index.ts";
 import type { Model } from "../models/index.ts";
 import { chiSquareUpperTail } from "../quantity/index.ts";
+import { type CurvedFit, fitCurved, settle } from "./curved-fit.ts";
 import { errorModel as errorModelOf } from "./error-model.ts";
+import { demandLevels } from "./near-limit/levels.ts";
 import type { AnalysisOptions } from "./options.ts";
 import type { Propagation } from "./propagation.ts";
 
@@ -47,6 +49,8 @@ export interface Solution {
   readonly by: Propagation;
   /** weights of a robust fit, one a used band; null otherwise */
   readonly weights: readonly number[] | null;
+  /** whether the model is linear in its constants */
+  readonly linear: boolean;
 }
 
 /** χ² less probable than this is treated as excess (and more probable than 1 minus this is mentioned). */
@@ -57,11 +61,15 @@ export function solve(series: Series, model: Model, options: AnalysisOptions): S
   const used = series.bands.filter((band) => band.use);
   const errors = errorModelOf(series, used, model);
   const problem: Problem = { ...model.prepare(used, options), observed: used.map((band) => band.position), errors };
-  const stated = determined(series, used, problem);
+  const curved = problem.linear ? null : curvedStart(series, model, used, problem, options);
+  const stated = curved?.fit ?? determined(series, model, used, problem, () => fitLinear(problem));
   const sigmaKnown = errors.sigmas !== null;
   const dof = stated.degreesOfFreedom;
   const probability = sigmaKnown && dof > 0 ? chiSquareUpperTail(stated.chiSquare, dof) : null;
-  const excess = treat(problem, stated, probability, options);
+  const excess =
+    curved === null
+      ? treat(problem, stated, probability, options)
+      : settle(problem, curved, (tangent, untreated) => treat(tangent, untreated, probability, options));
   const groups = repeats(used);
   // Residual tests cost as much as the fit, and many solutions are made only for their χ².
   const tests = once(() => diagnose(stated, groups));
@@ -85,6 +93,7 @@ export function solve(series: Series, model: Model, options: AnalysisOptions): S
     treatment: excess.treatment,
     excess: { kind: excess.kind, value: excess.value, applied: excess.applied },
     weights: excess.weights,
+    linear: problem.linear,
     probability,
     by: {
       covariance: excess.fit.covariance,
@@ -134,9 +143,25 @@ function freeConstants({ parameters }: Prepared): number {
   return parameters.filter((p) => p.held === undefined && p.prior === undefined).length;
 }
 
-function determined(series: Series, used: readonly Band[], problem: Problem): LinearFit {
+/** The untreated fit of a model that is not linear in its constants, from starts of the model's own. */
+function curvedStart(
+  series: Series,
+  model: Model,
+  used: readonly Band[],
+  problem: Problem,
+  options: AnalysisOptions,
+): CurvedFit {
+  demandLevels(series, used, model);
+  return determined(series, model, used, problem, () => {
+    const start = model.starts?.(used, problem.observed, options) ?? null;
+    if (start === null) throw new UndeterminedError(0, "no first values follow from the bands");
+    return fitCurved(problem, UNTREATED, start);
+  });
+}
+
+function determined<T>(series: Series, model: Model, used: readonly Band[], problem: Problem, fit: () => T): T {
   try {
-    return fitLinear(problem);
+    return fit();
   } catch (error) {
     if (!(error instanceof UndeterminedError)) throw error;
     const free = problem.parameters.filter((p) => p.held === undefined);
@@ -145,7 +170,7 @@ function determined(series: Series, used: readonly Band[], problem: Problem): Li
     const few = `${distinct} different used band${distinct === 1 ? "" : "s"} cannot determine ${free.length} constants (${free.map((p) => p.symbol).join(", ")})`;
     const mend =
       distinct < free.length
-        ? `give at least ${free.length} different bands, ask for fewer --terms, or hold a constant with --fix`
+        ? `give at least ${free.length} different bands, ${model.terms === null ? "or" : "ask for fewer --terms, or"} hold a constant with --fix`
         : `they leave ${problem.parameters[error.parameter]!.symbol} open; add a band from another level or hold that constant with --fix`;
     throw new InputError([{ code: "not-determined", place, what: `series "${series.name}": ${few}`, mend }], 3);
   }

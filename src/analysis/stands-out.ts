@@ -19,7 +19,7 @@ const BAND_MARGIN = 5;
 
 /** The band that stands out most, or null. With one degree of freedom all bands look alike, and none is named. */
 export function standsOut({ used, tests, stated, sigmaKnown }: Solution): Outlier | null {
-  if (stated.degreesOfFreedom < 2) return null;
+  if (stated.degreesOfFreedom < 2 || (!sigmaKnown && stated.exact)) return null;
   let worst = -1;
   tests.studentized.forEach((t, i) => {
     if (t !== null && Math.abs(t) > Math.abs(tests.studentized[worst] ?? 0)) worst = i;

@@ -64,7 +64,18 @@ export const moleculeFlags: readonly Flag[] = [
 
 /** How the fit is made. */
 export const fitFlags: readonly Flag[] = [
-  { name: "model", value: "NAME", help: "oscillator (default)" },
+  {
+    name: "model",
+    value: "NAME",
+    help: "oscillator (default) or near-limit: levels close under the limit, v-0 above v = 0 of their own electronic state",
+  },
+  {
+    name: "power",
+    value: "N",
+    help: "near-limit: n of the long-range potential D - Cn/r^n, 3 or more, such as 5 or 6",
+  },
+  { name: "cn", value: "C", help: "near-limit: Cn in cm-1 Å^n, such as 3.1e5 (default fitted; needs masses)" },
+  { name: "limit", value: "D", help: "near-limit: the limit in cm-1 above v = 0, held (default fitted)" },
   {
     name: "terms",
     value: "N",

@@ -20,7 +20,7 @@ export interface ReportFile {
 
 /** Check, before any work, that a report can be written to `out`. Throws InputError with the mend. */
 export function checkFolder(out: string, force: boolean): void {
-  const about = statSync(out, { throwIfNoEntry: false });
+  const about = lookUp(out);
   if (about !== undefined) {
     if (!about.isDirectory())
       throw fault(out, "not-a-folder", "exists and is no folder", "name another folder with --out");
@@ -37,7 +37,9 @@ export function checkFolder(out: string, force: boolean): void {
   }
   const above = dirname(resolve(out));
   let existing = above;
-  while (!existsSync(existing)) existing = dirname(existing);
+  while (lookUp(existing) === undefined) existing = dirname(existing);
+  if (!lookUp(existing)!.isDirectory())
+    throw fault(out, "not-writable", `cannot be made: ${existing} is no folder`, "name another folder with --out");
   try {
     accessSync(existing, constants.W_OK);
   } catch {
@@ -50,14 +52,27 @@ export function checkFolder(out: string, force: boolean): void {
   }
 }
 
+/** What stands at a path; undefined also where a file stands in the place of a folder above it. */
+function lookUp(path: string) {
+  try {
+    return statSync(path, { throwIfNoEntry: false });
+  } catch {
+    return undefined;
+  }
+}
+
 /** Write a report beside its place and swap it in, so that an existing one is never half overwritten. */
 export function writeFolder(out: string, files: readonly ReportFile[]): void {
   const place = resolve(out);
   const fresh = `${place}.new-${process.pid}`;
   const old = `${place}.old-${process.pid}`;
   try {
+    if (!existsSync(dirname(place))) mkdirSync(dirname(place), { recursive: true });
+    // One folder at a time: where the system refuses a folder, a recursive mkdir may try for ever.
+    mkdirSync(fresh);
     for (const { name, content } of files) {
-      mkdirSync(dirname(join(fresh, name)), { recursive: true });
+      const folder = dirname(join(fresh, name));
+      if (!existsSync(folder)) mkdirSync(folder);
       writeFileSync(join(fresh, name), content);
     }
     const replaced = existsSync(place);

@@ -33,7 +33,9 @@ export async function gather(request: FitRequest): Promise<Gathered> {
   const wrong = [
     ...faults,
     ...more,
-    ...(options === null || result === null ? [] : result.series.flatMap((s) => options.model.check(s))),
+    ...(options === null || result === null
+      ? []
+      : result.series.flatMap((s) => options.model.check(s, options.analysis))),
   ];
   if (wrong.length > 0 || options === null || result === null) throw new InputError(distinct(wrong));
   return { settings, series: result.series, options, warnings: result.warnings };

@@ -1,5 +1,6 @@
 import {
   type FitDocument,
+  labelsWithin,
   type Prediction,
   type Propagation,
   predict as predictBands,
@@ -48,6 +49,10 @@ interface Source {
   readonly by: Propagation;
   readonly lastBandOut: number | null;
   readonly used: readonly { readonly label: string }[];
+  /** u, for models that need it */
+  readonly reducedMass: number | null;
+  /** the fit says that no levels follow from it */
+  readonly refused: boolean;
   readonly warnings: readonly Warning[];
 }
 
@@ -84,9 +89,9 @@ type Prepared = { readonly sources: readonly Source[]; readonly options: ReadOpt
 
 function predictionsFrom(source: Source, { model, analysis }: ReadOptions, hot: number): SeriesPredictions {
   const { values, by } = source;
+  if (source.refused) return { name: source.name, predictions: [], warnings: source.warnings };
   const terms = values.length;
-  const well = model.well!(values);
-  const limit = boundLevel(well);
+  const limit = boundLevel(model, values);
   const top = Math.max(0, ...source.used.map(({ label }) => model.levels(label).upper));
   const wanted = analysis.upTo ?? (top > 0 ? top + 3 : DEFAULT_UP_TO);
   const upTo = limit === null ? wanted : Math.min(wanted, limit);
@@ -99,17 +104,19 @@ function predictionsFrom(source: Source, { model, analysis }: ReadOptions, hot: 
       code: "above-highest-level",
       message: `predictions end at v = ${upTo}: these constants have no bound level above it; ask for --up-to ${upTo} or less`,
     });
-  const options = { ...analysis, terms, fixed: {} };
+  const options = { ...analysis, terms, fixed: {}, reducedMass: source.reducedMass };
+  const inside = model.limit === undefined ? labels : labelsWithin(labels, source.used, model, options, values);
   const by95 = { ...by, coverage: analysis.coverage };
   return {
     name: source.name,
-    predictions: predictBands(model, options, labels, values, by95, source.lastBandOut, source.used),
+    predictions: predictBands(model, options, inside, values, by95, source.lastBandOut, source.used),
     warnings,
   };
 }
 
-function boundLevel(well: NonNullable<ReturnType<NonNullable<Model["well"]>>>): number | null {
-  const limit = turningPoint(well, 0);
+function boundLevel(model: Model, values: readonly number[]): number | null {
+  const limit =
+    model.well === undefined ? (values[model.limit?.level ?? -1] ?? null) : turningPoint(model.well(values), 0);
   return limit === null ? null : Math.max(0, Math.ceil(limit - 1e-9) - 1);
 }
 
@@ -131,6 +138,8 @@ function sourceOf(result: SeriesResult): Source {
     by: { covariance, degreesOfFreedom: result.quality.intervalDegreesOfFreedom, coverage: null },
     lastBandOut: result.predictions[0]?.lastBandOut ?? null,
     used: result.bands.filter((band) => band.used),
+    reducedMass: result.reducedMass,
+    refused: result.dissociation.some(({ method, d0 }) => method === "near-limit" && d0 === null),
     warnings: result.warnings,
   };
 }
@@ -147,7 +156,9 @@ async function fromStored(stored: { text: string; source: string }, request: Fit
   const series = document?.series;
   if (document?.schemaVersion !== 1 || !Array.isArray(series) || series.length === 0 || !series.every(isResult))
     throw fault("holds no result of fit", "name the result.json of a report, or the output of rungwise fit --json");
-  const settings = requestSettings({ ...request, model: series[0]!.model });
+  const { power } = document.request ?? {};
+  const told = power === undefined ? request : { power, ...request };
+  const settings = requestSettings({ ...told, model: series[0]!.model });
   const options = checked(await readOptions(settings));
   return { sources: series.map(sourceOf), options };
 }
@@ -160,6 +171,7 @@ function isResult(x: unknown): x is SeriesResult {
     Object.values(result.constants).every(({ value }) => Number.isFinite(value)) &&
     Array.isArray(result.bands) &&
     Array.isArray(result.predictions) &&
+    Array.isArray(result.dissociation) &&
     typeof result.quality === "object"
   );
 }
@@ -167,6 +179,15 @@ function isResult(x: unknown): x is SeriesResult {
 async function fromConstants(text: string, request: FitRequest): Promise<Prepared> {
   const options = checked(await readOptions(requestSettings(request)));
   const { constants } = options.model;
+  if (options.model.well === undefined)
+    throw new InputError([
+      {
+        code: "constants",
+        place: { source: "--constants" },
+        what: `constants of the model ${options.model.name} alone do not say which levels they hold for`,
+        mend: "predict from the bands, or from a result.json",
+      },
+    ]);
   const faults: Fault[] = [];
   const fault = (what: string, mend: string) =>
     faults.push({ code: "constants", place: { source: "--constants" }, what, mend });
@@ -214,6 +235,8 @@ async function fromConstants(text: string, request: FitRequest): Promise<Prepare
         by: { covariance, degreesOfFreedom: null, coverage: null },
         lastBandOut: null,
         used: [],
+        reducedMass: null,
+        refused: false,
         warnings,
       },
     ],

@@ -70,6 +70,7 @@ export async function readOptions(
     terms,
     autoTerms,
     fixed: model === null ? {} : readFixed(reader, model),
+    power: reader.number("power", (x) => x >= 3, OWN_SETTINGS.power!),
     excess: reader.choice<ExcessKind>("excess", ["scatter", "birge", "none"], "scatter"),
     scatter: reader.number("scatter", positive, "write the added scatter in cm-1, such as 0.3"),
     coverage: reader.number("coverage", (x) => x > 0 && x < 1, "write a probability between 0 and 1, such as 0.99"),
@@ -84,6 +85,7 @@ export async function readOptions(
     alphaE: reader.number("alpha-e", Number.isFinite, "write αe in cm-1, such as 0.307"),
     re: reader.number("re", positive, "write re in Å, such as 1.2746"),
   };
+  if (model !== null) checkOwnSettings(reader, model);
   const notation = reader.choice<Notation>("notation", ["equilibrium", "local"], "equilibrium");
   if (model === null || reader.faults.length > 0) return { options: null, faults: reader.faults };
   return { options: { model, analysis, notation, symbols: symbolsOf(model, notation) }, faults: [] };
@@ -119,31 +121,61 @@ function readAirConditions(reader: Reader): AirConditions {
   return standardAir;
 }
 
-/** `--fix "weye=0.22(1) weze=0"`: constants held, or with an uncertainty observed. */
+/** Settings that only some models know, with what to write. */
+const OWN_SETTINGS: Readonly<Record<string, string>> = {
+  power: "write n of the long-range potential D - Cn/r^n, 3 or more (no such law for less), such as 5 or 6",
+  cn: "write Cn in cm-1 Å^n, such as 3.1e5, or 3.1(2)e5 with its uncertainty",
+  limit: "write the limit in cm-1 above v = 0, such as 20043.1, or 20043.1(5) with its uncertainty",
+};
+
+/** What the model cannot do without must be there, and what it does not know must not. */
+function checkOwnSettings(reader: Reader, { name: model, settings }: Model): void {
+  const named = reader.settings.get("model");
+  const required = settings?.required ?? [];
+  for (const name of required)
+    if (!reader.settings.has(name) && named !== undefined)
+      reader.fault(named, "setting-missing", `${model} needs --${name}`, OWN_SETTINGS[name]!);
+  const known = [...required, ...Object.keys(settings?.constants ?? {})];
+  for (const name of Object.keys(OWN_SETTINGS)) {
+    const setting = reader.settings.get(name);
+    if (setting !== undefined && !known.includes(name))
+      reader.fault(
+        setting,
+        "setting-of-another-model",
+        `"${name}" means nothing to the model ${model}`,
+        "leave it out, or name the model it belongs to: --model near-limit",
+      );
+  }
+}
+
+/** `--fix "weye=0.22(1) weze=0"`: constants held, or with an uncertainty observed; a model may have settings that do the same. */
 function readFixed(reader: Reader, model: Model): Readonly<Record<string, Fixed>> {
-  const setting = reader.settings.get("fix");
-  if (setting === undefined) return {};
   const fixed: Record<string, Fixed> = {};
-  for (const { key, value } of readAssignments(setting.value)) {
-    const keys = model.constants.map((constant) => constant.key);
-    const read = readMeasurement(value ?? "");
-    if (!keys.includes(key))
-      reader.fault(
-        setting,
-        "unknown-constant",
-        `there is no constant "${key}"`,
-        `write one of ${keys.join(", ")}, such as weye=0.22`,
-      );
-    else if (value === null || !read.ok)
-      reader.fault(
-        setting,
-        "not-a-number",
-        `"${key}" has no number`,
-        `write ${key}=0.22, or ${key}=0.22(1) with its uncertainty`,
-      );
+  const keys = model.constants.map((constant) => constant.key);
+  const fix = reader.settings.get("fix");
+  const read = (setting: Setting, key: string, text: string, mend: string) => {
+    const measured = readMeasurement(text);
+    const positive = model.constants.find((constant) => constant.key === key)!.positive === true;
+    if (!measured.ok) reader.fault(setting, "not-a-number", `"${key}" has no number`, mend);
+    else if (positive && !(measured.value > 0))
+      reader.fault(setting, "out-of-range", `${key} = ${measured.value} is not possible: it is positive`, mend);
     else if (Object.hasOwn(fixed, key))
       reader.fault(setting, "constant-twice", `"${key}" stands there twice`, "name each constant once");
-    else fixed[key] = { value: read.value, sigma: read.sigma };
+    else fixed[key] = { value: measured.value, sigma: measured.sigma };
+  };
+  for (const { key, value } of fix === undefined ? [] : readAssignments(fix.value)) {
+    if (keys.includes(key)) read(fix!, key, value ?? "", `write ${key}=0.22, or ${key}=0.22(1) with its uncertainty`);
+    else
+      reader.fault(
+        fix!,
+        "unknown-constant",
+        `there is no constant "${key}"`,
+        `write one of ${keys.join(", ")}, such as ${keys.includes("weye") ? "weye=0.22" : `${keys[0]}=…`}`,
+      );
+  }
+  for (const [name, key] of Object.entries(model.settings?.constants ?? {})) {
+    const setting = reader.settings.get(name);
+    if (setting !== undefined) read(setting, key, setting.value, OWN_SETTINGS[name]!);
   }
   return fixed;
 }

@@ -42,7 +42,16 @@ export async function report(request: ReportRequest, assets?: FigureAssets): Pro
   return {
     document,
     files: [
-      { name: "report.md", content: renderReport(document, { commandLine: again, figures, notation, symbols }) },
+      {
+        name: "report.md",
+        content: renderReport(document, {
+          commandLine: again,
+          figures,
+          notation,
+          symbols,
+          modelReferences: gathered.options.model.references,
+        }),
+      },
       ...pictures.map((content, i) => ({ name: figures[i]!.file, content })),
       { name: "bands.csv", content: bandsCsv(document) },
       { name: "constants.csv", content: constantsCsv(document) },

@@ -41,6 +41,12 @@ export interface FitRequest {
   readonly model?: string;
   /** number of constants, 2 to 6, or "auto"; @default auto when σ is known and a degree of freedom is left, else 2 */
   readonly terms?: Word;
+  /** of model "near-limit": n of the long-range potential -C_n/rⁿ, 3 or more */
+  readonly power?: Word;
+  /** of model "near-limit": C_n in cm-1 Åⁿ, such as 3.1e5; with an uncertainty one more observation; @default fitted */
+  readonly cn?: Word;
+  /** of model "near-limit": the limit in cm-1 above v = 0, held; with an uncertainty one more observation; @default fitted */
+  readonly limit?: Word;
   /** constants held, such as "weye=0.22"; with an uncertainty one more observation */
   readonly fix?: string;
   /** rotational constants in cm-1, bond length in Å */

@@ -12,6 +12,8 @@ export interface LinearFit extends FitResult {
   readonly gram: readonly (readonly number[])[];
   readonly whitening: Whitening;
   readonly sigmaKnown: boolean;
+  /** the residuals are no more than rounding: nothing can be learnt from their size */
+  readonly exact: boolean;
 }
 
 /** The data leave a constant undetermined; `parameter` is its index. */
@@ -24,9 +26,12 @@ export class UndeterminedError extends RangeError {
   }
 }
 
+/** Roundings that a solution of this size may leave in a residual. */
+const ROUNDINGS = 256;
+
 /**
  * Generalised least squares of a model linear in its constants. With σ stated the covariance follows from it; without, from the
- * residual variance (null without a degree of freedom), and a prior is weighed against that variance by iteration.
+ * residual variance (null without a degree of freedom, or when the residuals are rounding), and a prior is weighed against that variance by iteration.
  * Throws UndeterminedError when the data leave a constant undetermined.
  */
 export function fitLinear(problem: Problem, treatment: Treatment = UNTREATED): LinearFit {
@@ -54,7 +59,10 @@ export function fitLinear(problem: Problem, treatment: Treatment = UNTREATED): L
     values[k] = triangle.solution[j]!;
   });
   const gram = spread(inverseGram(triangle), free, parameters.length);
-  const variance = sigmaKnown ? 1 : degreesOfFreedom > 0 ? triangle.sumOfSquares / degreesOfFreedom : null;
+  const residuals = observed.map((y, i) => y - dot(jacobian[i]!, values));
+  const exact = residuals.every((r, i) => Math.abs(r) <= ROUNDINGS * Number.EPSILON * Math.abs(observed[i]!));
+  const scatters = degreesOfFreedom > 0 && !exact;
+  const variance = sigmaKnown ? 1 : scatters ? triangle.sumOfSquares / degreesOfFreedom : null;
   const covariance = variance === null ? null : gram.map((row) => row.map((c) => c * variance));
   if (covariance !== null && !sigmaKnown) addShared(covariance, errors.shared, jacobian, gram, white);
   return {
@@ -63,7 +71,8 @@ export function fitLinear(problem: Problem, treatment: Treatment = UNTREATED): L
     covariance,
     degreesOfFreedom,
     chiSquare: triangle.sumOfSquares,
-    residuals: observed.map((y, i) => y - dot(jacobian[i]!, values)),
+    residuals,
+    exact,
     converged: true,
     reason: "linear in its constants: solved directly by QR",
     iterations: 1,

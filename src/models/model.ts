@@ -16,6 +16,10 @@ export interface ModelOptions {
   /** number of constants of a single oscillator; null: the model's own default */
   readonly terms: number | null;
   readonly fixed: Readonly<Record<string, Fixed>>;
+  /** n of the long-range potential -C_n/rⁿ, for models that ask for it */
+  readonly power?: number | null;
+  /** of the series, in u; put there by the analysis */
+  readonly reducedMass?: number | null;
 }
 
 /** One transition to calculate. */
@@ -41,6 +45,30 @@ export interface ConstantInfo {
   readonly key: string;
   readonly unit: string;
   readonly symbol: Readonly<Record<Notation, string>>;
+  /** only a positive value makes sense */
+  readonly positive?: true;
+}
+
+/** Settings a model has of its own, by their long names. */
+export interface OwnSettings {
+  /** those it cannot do without */
+  readonly required: readonly string[];
+  /** those that give a constant: the same as `--fix` with that key */
+  readonly constants: Readonly<Record<string, string>>;
+}
+
+/** What is asked of a law that holds only close under the dissociation limit, which is one of its constants. */
+export interface Limit {
+  /** fewer different levels than this are refused */
+  readonly leastLevels: number;
+  /** places of the energy of the limit, of the (not whole) quantum number there, and of the long-range constant */
+  readonly energy: number;
+  readonly level: number;
+  readonly slope: number;
+  /** what is a straight line against v where the law holds, for messages */
+  line(options: ModelOptions): string;
+  /** the same law with one more constant, the last, that is 0 where the law holds */
+  bent(transitions: readonly Transition[], options: ModelOptions): Prepared;
 }
 
 /** A physical model: what it can do, asked for by capability and never by name. */
@@ -55,11 +83,15 @@ export interface Model {
   /** how many constants a user may ask for; null where the number is given by the model */
   readonly terms: { readonly least: number; readonly most: number; readonly default: number } | null;
   readonly constants: readonly ConstantInfo[];
-  check(series: Series): Fault[];
+  readonly settings?: OwnSettings;
+  check(series: Series, options: ModelOptions): Fault[];
   prepare(transitions: readonly Transition[], options: ModelOptions): Prepared;
   /** labels of the transitions worth predicting up to a level, in order */
   labels(upTo: number): string[];
   /** upper and lower level of a label */
   levels(label: string): { readonly upper: number; readonly lower: number };
   well?(p: readonly number[]): Well;
+  /** first values of all constants, of a model that is not linear in them; null where the bands do not lead to any */
+  starts?(transitions: readonly Transition[], observed: readonly number[], options: ModelOptions): number[] | null;
+  readonly limit?: Limit;
 }

@@ -5,5 +5,6 @@ export * from "./distributions.ts";
 export * from "./format.ts";
 export * from "./measurement.ts";
 export type * from "./quantity.ts";
+export { logGamma } from "./special-functions.ts";
 export * from "./unit-text.ts";
 export * from "./units.ts";

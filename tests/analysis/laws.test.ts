@@ -95,7 +95,7 @@ describe("laws of the fit", () => {
 
   it("predictions stop at the highest bound level and default to three beyond the last band", async () => {
     const shallow = await one({ bands: bands({ we: 1000, wexe: 100 }, [1, 2, 3]), upTo: 30 });
-    expect(shallow.derived.highestLevel!.value).toBe(4);
+    expect(shallow.derived!.highestLevel!.value).toBe(4);
     expect(shallow.predictions.at(-1)!.label).toBe("4-0");
     expect(shallow.warnings.map(({ code }) => code)).toContain("above-highest-level");
     const deep = await one({ bands: bands({ we: 3870, wexe: 83 }, [1, 2, 4]) });
@@ -105,10 +105,10 @@ describe("laws of the fit", () => {
   it("the four intercepts and slopes are those of the straight lines through exact Morse bands", async () => {
     const { derived } = await one({ bands: bands({ we: 3870, wexe: 83 }, [1, 2, 3, 4]) });
     // ν̃/v = (ω - ωx) - ωx·v and ΔG = (ω - ωx) - 2ωx·(v + ½): algebra; rounding only
-    expect(derived.positionPlotIntercept.value).toBeCloseTo(3787, 7);
-    expect(derived.positionPlotSlope.value).toBeCloseTo(-83, 7);
-    expect(derived.spacingPlotIntercept.value).toBeCloseTo(3787, 7);
-    expect(derived.spacingPlotSlope.value).toBeCloseTo(-166, 7);
+    expect(derived!.positionPlotIntercept.value).toBeCloseTo(3787, 7);
+    expect(derived!.positionPlotSlope.value).toBeCloseTo(-83, 7);
+    expect(derived!.spacingPlotIntercept.value).toBeCloseTo(3787, 7);
+    expect(derived!.spacingPlotSlope.value).toBeCloseTo(-166, 7);
   });
 
   it("the spacing sum is exact on a Morse ladder, with gaps and hot bands too", async () => {

@@ -315,7 +315,7 @@ describe("input that is odd but right", () => {
     expect(constants.wexe!.value).toBeLessThan(0);
     expect(dissociation[0]!.d0).toBeNull();
     expect(dissociation[0]!.note).toContain("not positive");
-    expect(derived.highestLevel).toBeNull();
+    expect(derived!.highestLevel).toBeNull();
     expect(warnings.map(({ code }) => code)).toContain("wexe-not-positive");
   });
 

@@ -7,7 +7,7 @@ import type { FigureOptions } from "./options.ts";
 import { extrapolatedDash, SIZE, seriesStyle } from "./style.ts";
 import { quotient, SYMBOL, UNIT } from "./symbols.ts";
 import { fittedWell, type Valued } from "./term-values.ts";
-import { shortened } from "./text-width.ts";
+import { distinctNames } from "./text-width.ts";
 import { paddedRange } from "./ticks.ts";
 
 /** Beyond this many times the observed range the line is not followed to zero. */
@@ -35,7 +35,12 @@ export function birgeSponerFigure(series: readonly SeriesResult[], options: Figu
   const drawn = local ? overtones : series.map((one) => spacingPlot(one));
   const points = drawn.flatMap((one) => one.points);
   if (points.length === 0) return null;
-  const traces = drawn.flatMap((one, i) => tracesOf(one, i, drawn.length > 1));
+  const names = distinctNames(
+    drawn.map(({ name }) => name),
+    90,
+    SIZE.small,
+  );
+  const traces = drawn.flatMap((one, i) => tracesOf(one, i, drawn.length > 1 ? names[i]! : null));
   const zero = drawn.some(({ reachesZero }) => reachesZero);
   const heights = [
     ...points.flatMap(({ y, yError = 0 }) => [y - yError, y + yError]),
@@ -111,9 +116,8 @@ function positionPlot(series: SeriesResult): Drawn {
 
 const STEPS = 120;
 
-function tracesOf({ name, points, line, from, observed, to }: Drawn, index: number, named: boolean): Trace[] {
+function tracesOf({ points, line, from, observed, to }: Drawn, index: number, label: string | null): Trace[] {
   const { colour, marker, dashPt } = seriesStyle(index);
-  const label = named ? shortened(name, 90, SIZE.small) : null;
   const traces: Trace[] = [];
   if (line !== null) {
     const sampled = (start: number, end: number) =>

@@ -34,3 +34,8 @@ export function modelPhrase(series: readonly SeriesResult[], { notation }: Figur
   if (distinct.length === 1) return distinct[0]!;
   return listed(series.map(({ name }, i) => `${phrases[i]} for ${name}`));
 }
+
+/** The names of all series. */
+export function namesOf(series: readonly SeriesResult[]): string {
+  return listed(series.map(({ name }) => name));
+}

@@ -2,9 +2,13 @@ import type { SeriesResult } from "../../analysis/index.ts";
 import { birgeSponerFigure } from "./birge-sponer.ts";
 import type { FigureSpec } from "./figure-spec.ts";
 import type { FigureOptions } from "./options.ts";
+import { positionsFigure } from "./positions.ts";
+import { potentialFigure } from "./potential.ts";
 import { residualsFigure } from "./residuals.ts";
 
 /** The figures of a report, in order; those that cannot be drawn are left out. */
 export function figuresFor(series: readonly SeriesResult[], options: FigureOptions): FigureSpec[] {
-  return [birgeSponerFigure, residualsFigure].flatMap((build) => build(series, options) ?? []);
+  return [birgeSponerFigure, residualsFigure, potentialFigure, positionsFigure].flatMap(
+    (build) => build(series, options) ?? [],
+  );
 }

@@ -6,21 +6,26 @@ import { levelsOf } from "./levels.ts";
 import type { FigureOptions } from "./options.ts";
 import { GREY, SIZE, seriesStyle } from "./style.ts";
 import { plain, quotient, SYMBOL, UNIT } from "./symbols.ts";
-import { shortened } from "./text-width.ts";
+import { distinctNames } from "./text-width.ts";
 import { paddedRange } from "./ticks.ts";
 
 /** Several series stand this far apart at the same v. */
 const APART = 0.12;
 
-/** Observed minus calculated positions against v′ with their stated uncertainties; null when no band has a calculated position. */
+/** Observed minus calculated positions against v′ with their stated uncertainties; null when there is nothing to see. */
 export function residualsFigure(series: readonly SeriesResult[], options: FigureOptions): FigureSpec | null {
   const all = series.map((one, i) => pointsOf(one, (i - (series.length - 1) / 2) * APART));
   const largest = Math.max(...all.flat().flatMap(({ used, y, yError = 0 }) => (used ? [Math.abs(y) + yError] : [])));
   // A band that was not fitted may lie anywhere; it must not press the others flat.
   const drawn = all.map((points) => points.filter(({ used, y }) => used || Math.abs(y) <= 1.5 * largest));
   const points = drawn.flat();
-  if (points.length === 0) return null;
+  if (points.length === 0 || points.every(({ y, yError }) => y === 0 && yError === undefined)) return null;
   const beyond = all.flat().length - points.length;
+  const names = distinctNames(
+    series.map(({ name }) => name),
+    90,
+    SIZE.small,
+  );
   const right = Math.max(...points.map(({ x }) => x)) + 0.6;
   const reach = points.flatMap(({ y, yError = 0 }) => [y - yError, y + yError, 0]);
   const traces: Trace[] = [
@@ -35,7 +40,7 @@ export function residualsFigure(series: readonly SeriesResult[], options: Figure
         { x: right, y: 0 },
       ],
     },
-    ...drawn.flatMap((some, i) => tracesOf(some, i, series.length > 1 ? series[i]!.name : null)),
+    ...drawn.flatMap((some, i) => tracesOf(some, i, series.length > 1 ? names[i]! : null)),
   ];
   const [low, high] = paddedRange(reach, 0.14);
   return compose(
@@ -76,25 +81,26 @@ interface Residual extends Point {
 
 function pointsOf({ bands, warnings }: SeriesResult, shift: number): Residual[] {
   const named = new Set(warnings.filter(({ code }) => code === "band-stands-out").map(({ about }) => about));
-  return bands.flatMap(({ label, residual, standardUncertainty: u, used }) => {
+  return bands.flatMap(({ label, observed, residual, standardUncertainty: u, used }) => {
     const levels = levelsOf(label);
     if (levels === null || residual === null) return [];
     // Hot bands stand a little to the right of the overtone with the same upper level.
     const x = levels.upper + shift + (levels.lower > 0 ? 0.25 : 0);
     const flagged = used && named.has(label);
-    return [{ x, y: residual, used, flagged, label, ...(u === null ? {} : { yError: u }) }];
+    // A fit through every band leaves rounding, which is no residual.
+    const y = Math.abs(residual) < 1e-10 * observed ? 0 : residual;
+    return [{ x, y, used, flagged, label, ...(u === null ? {} : { yError: u }) }];
   });
 }
 
 function tracesOf(points: readonly Residual[], index: number, name: string | null): Trace[] {
   const { colour, marker } = seriesStyle(index);
-  const label = name === null ? null : shortened(name, 90, SIZE.small);
   return [true, false].flatMap((filled): Trace[] => {
     const some = points.filter(({ used }) => used === filled);
     if (some.length === 0) return [];
     const plainPoints = some.map(({ x, y, yError }) => ({ x, y, ...(yError === undefined ? {} : { yError }) }));
     return [
-      { kind: "points", name: filled ? label : null, colour, marker, filled, sizePt: SIZE.marker, points: plainPoints },
+      { kind: "points", name: filled ? name : null, colour, marker, filled, sizePt: SIZE.marker, points: plainPoints },
     ];
   });
 }

@@ -60,3 +60,24 @@ export function shortened(text: string, widthPt: number, sizePt: number): string
   }
   return `${letters[0] ?? ""}…`;
 }
+
+/** Names no wider than `widthPt` that still differ: where shortening in the middle makes two alike, what all share is cut instead. */
+export function distinctNames(names: readonly string[], widthPt: number, sizePt: number): readonly string[] {
+  const cut = names.map((name) => shortened(name, widthPt, sizePt));
+  if (new Set(cut).size === new Set(names).size) return cut;
+  const shared = (a: string, b: string) => {
+    let length = 0;
+    while (length < Math.min(a.length, b.length) && a[length] === b[length]) length++;
+    return length;
+  };
+  const common = Math.min(...names.map((name) => shared(name, names[0]!)));
+  const start = Math.max(0, common - 3);
+  return names.map((name) => {
+    const rest = start === 0 ? name : `…${name.slice(start)}`;
+    for (let keep = rest.length; keep > 1; keep--) {
+      const head = keep === rest.length ? rest : `${rest.slice(0, keep)}…`;
+      if (textWidth(head, sizePt) <= widthPt) return head;
+    }
+    return rest;
+  });
+}

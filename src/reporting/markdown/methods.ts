@@ -57,10 +57,11 @@ export function methods({ document, notation, symbols, citations, modelReference
     );
   if (row("turning-point")) text.push("Turning point: G(v) where dG/dv = 0 past the highest observed level.");
   if (row("near-limit")) text.push(`Near the limit: the long-range form of ${cite("lerouybernstein1970")}.`);
-  if (any(({ derived }) => derived.forceConstant !== null)) text.push(`Force constant: k = (2πc${first})²μ.`);
-  if (any(({ derived }) => derived.morseA !== null))
+  if (any(({ derived }) => derived !== null && derived.forceConstant !== null))
+    text.push(`Force constant: k = (2πc${first})²μ.`);
+  if (any(({ derived }) => derived !== null && derived.morseA !== null))
     text.push(`Morse a: a = √(8π²cμ${second}/h) ${cite("morse1929")}.`);
-  if (any(({ derived }) => derived.y00 !== null))
+  if (any(({ derived }) => derived !== null && derived.y00 !== null))
     text.push(
       `Y00 = (Be − ${second})/4 + αe${first}/(12Be) + (αe${first})²/(144Be³), included in De and the zero-point energy ${cite("dunham1932")}.`,
     );

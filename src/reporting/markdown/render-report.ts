@@ -59,7 +59,7 @@ export function renderReport(document: FitDocument, options: ReportOptions): str
       "Dissociation energy",
       [...side(dissociationComparison), ...each((one) => table(dissociationTable(one))), SAFETY_LINE],
     ],
-    ["Derived numbers", each((one) => table(derivedTable(one)))],
+    ["Derived numbers", each(derivedPart)],
     ["Predictions", [...each(predictionsPart), LASER_LINE]],
     ["Stability", each((one) => stabilityPart(one, symbols))],
     ["Figures", figures.length === 0 ? [] : [figuresSection(figures)]],
@@ -92,6 +92,11 @@ function constantsPart(one: SeriesResult, symbols: Symbols): string {
     }),
     ...(terms === null ? [] : [table(terms)]),
   ].join("\n\n");
+}
+
+function derivedPart(one: SeriesResult): string {
+  const derived = derivedTable(one);
+  return derived === null ? "None: the constants of this model describe no well around a minimum." : table(derived);
 }
 
 function predictionsPart({ predictions }: SeriesResult): string {

@@ -13,8 +13,8 @@ export function summary(series: SeriesResult, symbols: Symbols): string {
   const of = bond === null || bond === name || bond.startsWith("reduced mass") ? name : `${name} (${bondText(bond)})`;
   const values = Object.entries(constants).map(([key, q]) =>
     held.includes(key)
-      ? `${symbolOf(symbols, key)} = ${exact(q.value)} ${unitSymbol(q.unit)} (held)`
-      : `${symbolOf(symbols, key)} = ${quantity(q)} ${unitSymbol(q.unit)}`,
+      ? `${symbolOf(symbols, key)} = ${exact(q.value)} ${unitSymbol(q.unit)}`.trim().concat(" (held)")
+      : `${symbolOf(symbols, key)} = ${quantity(q)} ${unitSymbol(q.unit)}`.trim(),
   );
   const how = terms === null ? `the ${model} model` : count(terms, "term");
   const fitted = sentence(`fitted with ${how} give${quality.bands === 1 ? "s" : ""} ${andList(values)}.`);
@@ -24,6 +24,8 @@ export function summary(series: SeriesResult, symbols: Symbols): string {
     return `${first} ${sentence(`No dissociation energy follows from them: ${d0?.note ?? "not determined"}.`)}`;
   const [kj, u] = d0.converted?.["kJ/mol"] ?? [null, null];
   const molar = kj === null ? "" : `, ${measured(kj, u)} kJ mol⁻¹`;
-  const second = `The Morse relation extrapolates them to D0 = ${quantity(d0.d0)} cm⁻¹${molar}; its uncertainty is that of the fit alone.`;
+  const way =
+    d0.method === "near-limit" ? "The law of the limit puts it at" : "The Morse relation extrapolates them to";
+  const second = `${way} D0 = ${quantity(d0.d0)} cm⁻¹${molar}; its uncertainty is that of the fit alone.`;
   return `${first} ${sentence(second)}`;
 }

@@ -4,6 +4,7 @@ import { type Symbols, symbolOf } from "../symbols.ts";
 import type { Column, TableData } from "../table-data.ts";
 import { ends, exact, fixed, quantity } from "../text/cells.ts";
 import { andList } from "../text/lists.ts";
+import { quotient } from "../text/units.ts";
 import { intervalNote } from "./interval-note.ts";
 
 const interval = (bounds: readonly [string, string] | null) =>
@@ -13,20 +14,22 @@ const interval = (bounds: readonly [string, string] | null) =>
 export function constantsTable(series: SeriesResult, symbols: Symbols): TableData {
   const entries = Object.entries(series.constants);
   const other = entries.find(([, q]) => q.interval !== undefined)?.[1].interval?.coverage ?? null;
-  const unit = entries[0]?.[1].unit ?? "cm-1";
+  const units = new Set(entries.map(([, q]) => q.unit));
+  // Constants of different units carry them in their own row.
+  const unit = units.size > 1 ? {} : { unit: entries[0]?.[1].unit ?? "cm-1" };
   const columns: Column[] = [
     { quantity: "constant", align: "left" },
-    { quantity: "value", unit, align: "point" },
-    { quantity: "95 % interval", unit, align: "interval" },
+    { quantity: "value", ...unit, align: "point" },
+    { quantity: "95 % interval", ...unit, align: "interval" },
     ...(other === null
       ? []
-      : [{ quantity: `${exact(100 * other)} % interval`, unit, align: "interval" } satisfies Column]),
+      : [{ quantity: `${exact(100 * other)} % interval`, ...unit, align: "interval" } satisfies Column]),
   ];
   const rows = entries.map(([key, q]) => {
     const held = series.held.includes(key);
     return {
       cells: [
-        symbolOf(symbols, key),
+        units.size > 1 && q.unit !== "1" ? quotient(symbolOf(symbols, key), q.unit) : symbolOf(symbols, key),
         held ? `${exact(q.value)} (held)` : quantity(q),
         interval(ends(q, q.interval95)),
         ...(other === null ? [] : [interval(ends(q, q.interval?.bounds ?? null))]),

@@ -6,8 +6,9 @@ import { quotient } from "../text/units.ts";
 
 const ENERGIES = ["kJ/mol", "kcal/mol", "eV"] as const;
 
-/** Numbers that follow from the constants; the head of each row is its own quotient. */
-export function derivedTable({ derived, reducedMass }: SeriesResult): TableData {
+/** Numbers that follow from the constants; the head of each row is its own quotient. null for a model without any. */
+export function derivedTable({ derived, reducedMass }: SeriesResult): TableData | null {
+  if (derived === null) return null;
   const { zeroPointEnergy: zero, highestLevel } = derived;
   const notes: string[] = [];
   const row = (name: string, unit: string, q: Quantity | null) => {

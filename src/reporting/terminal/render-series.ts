@@ -26,6 +26,7 @@ import { section } from "./section.ts";
 export function renderSeries(series: SeriesResult, symbols: Symbols, paint: Paint): string {
   const dissociation = dissociationTable(series);
   const terms = termsTable(series);
+  const derived = derivedTable(series);
   const { fitReport, predictions } = series;
   return [
     headline(series, paint),
@@ -33,7 +34,7 @@ export function renderSeries(series: SeriesResult, symbols: Symbols, paint: Pain
     terms === null ? null : section("Number of terms", [terms], paint),
     section("Bands", [bandsTable(series), ...exclusions(series)], paint),
     section("Dissociation", [{ ...dissociation, notes: dissociation.notes.map(printUnits) }, SAFETY_LINE], paint),
-    section("Derived", [derivedTable(series)], paint),
+    derived === null ? null : section("Derived", [derived], paint),
     predictions.length === 0 ? null : section("Predictions", [predictionsTable(predictions), LASER_LINE], paint),
     stabilityBlock(series, symbols, paint),
     fitReport.converged ? null : section("Fit", [`Not converged: ${fitReport.reason}`], paint),
@@ -72,7 +73,7 @@ export function renderSeriesBriefly(series: SeriesResult, symbols: Symbols, pain
   const d0 = series.dissociation[0];
   const lines = [
     ...Object.entries(series.constants).map(
-      ([key, q]) => [symbolOf(symbols, key), `${quantity(q)} ${unitSymbol(q.unit)}`] as const,
+      ([key, q]) => [symbolOf(symbols, key), `${quantity(q)} ${unitSymbol(q.unit)}`.trim()] as const,
     ),
     ...(d0 === undefined
       ? []

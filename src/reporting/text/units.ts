@@ -1,5 +1,6 @@
 /** Units as printed, by the way they stand in data. */
 const printed: Readonly<Record<string, string>> = {
+  "1": "",
   "cm-1": "cm⁻¹",
   um: "µm",
   "N/m": "N m⁻¹",
@@ -8,9 +9,12 @@ const printed: Readonly<Record<string, string>> = {
   "kcal/mol": "kcal mol⁻¹",
 };
 
-/** A unit as printed: `cm-1` → `cm⁻¹`, `kJ/mol` → `kJ mol⁻¹`; unknown ones as they are. */
+/** A unit as printed: `cm-1` → `cm⁻¹`, `kJ/mol` → `kJ mol⁻¹`, `cm-1 Å^6` → `cm⁻¹ Å⁶`; unknown ones as they are. */
 export function unitSymbol(unit: string): string {
-  return Object.hasOwn(printed, unit) ? printed[unit]! : unit;
+  if (Object.hasOwn(printed, unit)) return printed[unit]!;
+  return unit
+    .replace(/\bcm-1\b/gu, "cm⁻¹")
+    .replace(/\^(\d+)$/u, (_, power: string) => [...power].map((digit) => "⁰¹²³⁴⁵⁶⁷⁸⁹"[Number(digit)]).join(""));
 }
 
 /** The unit as the divisor of a quotient: several factors stand in parentheses, `(kJ mol⁻¹)`. */

@@ -1,0 +1,2 @@
+export { limitSlope } from "./law.ts";
+export { nearLimit } from "./near-limit.ts";
