@@ -7,8 +7,21 @@ export interface Levels {
   readonly lower: number;
 }
 
+const remembered = new Map<string, Levels | null>();
+
 /** Read v'-v", such as 3-0 (any dash, spaces around it); null for anything else. The order of the levels is not checked. */
 export function readVibrationalLabel(label: string): Levels | null {
+  // The same few labels are asked for again and again in every fit.
+  let levels = remembered.get(label);
+  if (levels === undefined) {
+    levels = parse(label);
+    if (remembered.size > 1000) remembered.clear();
+    remembered.set(label, levels);
+  }
+  return levels;
+}
+
+function parse(label: string): Levels | null {
   const [, upper, lower] = /^(\d{1,3})-(\d{1,3})$/.exec(canonicalLabel(label)) ?? [];
   return upper === undefined || lower === undefined ? null : { upper: Number(upper), lower: Number(lower) };
 }

@@ -59,7 +59,8 @@ export function fitLinear(problem: Problem, treatment: Treatment = UNTREATED): L
     values[k] = triangle.solution[j]!;
   });
   const gram = spread(inverseGram(triangle), free, parameters.length);
-  const residuals = observed.map((y, i) => y - dot(jacobian[i]!, values));
+  const residuals = new Array<number>(observed.length);
+  for (let i = 0; i < residuals.length; i++) residuals[i] = observed[i]! - dot(jacobian[i]!, values);
   const exact = residuals.every((r, i) => Math.abs(r) <= ROUNDINGS * Number.EPSILON * Math.abs(observed[i]!));
   const scatters = degreesOfFreedom > 0 && !exact;
   const variance = sigmaKnown ? 1 : scatters ? triangle.sumOfSquares / degreesOfFreedom : null;

@@ -92,11 +92,15 @@ export function inverseGram({ columns, r, scale }: Triangle): number[][] {
       inverse[i * columns + k] = sum / r[i * columns + i]!;
     }
   }
-  return Array.from({ length: columns }, (_, i) =>
-    Array.from({ length: columns }, (_, j) => {
+  const gram: number[][] = [];
+  for (let i = 0; i < columns; i++) {
+    const row = new Array<number>(columns);
+    for (let j = 0; j < columns; j++) {
       let sum = 0;
       for (let k = Math.max(i, j); k < columns; k++) sum += inverse[i * columns + k]! * inverse[j * columns + k]!;
-      return sum / (scale[i]! * scale[j]!);
-    }),
-  );
+      row[j] = sum / (scale[i]! * scale[j]!);
+    }
+    gram.push(row);
+  }
+  return gram;
 }

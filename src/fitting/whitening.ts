@@ -11,10 +11,13 @@ export interface Whitening {
 /** Variance of each independent source after the treatment; with unknown σ every source counts 1. */
 function variances(errors: ErrorModel, treatment: Treatment, size: number): Float64Array {
   const sources = errors.mixing?.[0]?.length ?? size;
-  return Float64Array.from({ length: sources }, (_, k) => {
+  // Plain loops here and in the solver: a fit is a few dozen numbers, and there are many fits.
+  const s2 = new Float64Array(sources);
+  for (let k = 0; k < sources; k++) {
     const sigma = errors.sigmas === null ? 1 : errors.sigmas[k]!;
-    return (sigma * treatment.factor) ** 2 / (treatment.weights?.[k] ?? 1) + treatment.scatter ** 2;
-  });
+    s2[k] = (sigma * treatment.factor) ** 2 / (treatment.weights?.[k] ?? 1) + treatment.scatter ** 2;
+  }
+  return s2;
 }
 
 /** The covariance matrix V of `size` data, row by row. With unknown σ only its shape is meant, and the shared part is left out. */
@@ -41,8 +44,11 @@ export function covarianceOf(errors: ErrorModel, treatment: Treatment, size: num
 
 /** Prepare whitening; by Cholesky when errors are correlated. Throws RangeError when V is not positive definite. */
 export function whitening(errors: ErrorModel, treatment: Treatment, size: number): Whitening {
-  if (errors.mixing === null && (errors.sigmas === null || errors.shared.length === 0))
-    return { diagonal: variances(errors, treatment, size).map((s2) => 1 / Math.sqrt(s2)), lower: null, size };
+  if (errors.mixing === null && (errors.sigmas === null || errors.shared.length === 0)) {
+    const diagonal = variances(errors, treatment, size);
+    for (let i = 0; i < size; i++) diagonal[i] = 1 / Math.sqrt(diagonal[i]!);
+    return { diagonal, lower: null, size };
+  }
   return choleskyWhitening(covarianceOf(errors, treatment, size), size);
 }
 

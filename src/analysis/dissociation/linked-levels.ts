@@ -13,6 +13,8 @@ export interface LinkedLevels {
 /** The energies of the levels linked to v = 0, by least squares where bands close a loop; null when v = 0 is not in the bands. */
 export function linkedLevels({ used, model, errors, treatment }: Solution): LinkedLevels | null {
   const ends = used.map((band) => model.levels(band.label));
+  const direct = straight(used, ends);
+  if (direct !== null) return direct;
   const linked = new Set([0]);
   for (let before = -1; before !== linked.size; ) {
     before = linked.size;
@@ -44,6 +46,18 @@ export function linkedLevels({ used, model, errors, treatment }: Solution): Link
     return full;
   });
   return { v, energies: fit.values, weights };
+}
+
+/** The usual case, each level observed once and straight from v = 0: the positions are the energies. */
+function straight(used: readonly Band[], ends: readonly { upper: number; lower: number }[]): LinkedLevels | null {
+  const order = ends.map((_, i) => i).sort((a, b) => ends[a]!.upper - ends[b]!.upper);
+  const plain = order.every((i, at) => ends[i]!.lower === 0 && ends[i]!.upper !== ends[order[at - 1] ?? -1]?.upper);
+  if (!plain || order.length === 0) return null;
+  return {
+    v: order.map((i) => ends[i]!.upper),
+    energies: order.map((i) => used[i]!.position),
+    weights: order.map((i) => used.map((_, k) => Number(k === i))),
+  };
 }
 
 function levelFit(

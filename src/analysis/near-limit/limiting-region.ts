@@ -45,10 +45,15 @@ export function limitingRegion(solution: Solution, limit: Limit): Verdict {
   };
 }
 
-/** The lowest level from which the levels pass every test; null when no set of those above does. */
+/** Share of the levels kept from one trial to the next: many levels are searched in few trials, few are left out one by one. */
+const KEEP = 7 / 8;
+
+/** A low level from which up the levels pass every test; null when no set of the highest does. */
 export function passesFrom(solution: Solution, limit: Limit): number | null {
   const { series, model, options, used } = solution;
-  for (const lowest of levelsOf(used, model).slice(1)) {
+  const levels = levelsOf(used, model);
+  for (let count = Math.floor(KEEP * levels.length); count >= limit.leastLevels; count = Math.floor(KEEP * count)) {
+    const lowest = levels.at(-count)!;
     const kept = new Set(bandsFrom(used, lowest, model));
     const bands = series.bands.map((band) => (kept.has(band) ? band : { ...band, use: false }));
     const part = trySolve({ ...series, bands }, model, options);
