@@ -10,9 +10,9 @@ export type {
 } from "./analysis/index.ts";
 export { type ConvertDocument, type ConvertRequest, convert } from "./commands/convert.ts";
 export { fit } from "./commands/fit.ts";
+export { fitNonlinear, type NonlinearRequest, type NonlinearResult } from "./commands/fit-nonlinear.ts";
 export { type PredictDocument, type PredictRequest, predict } from "./commands/predict.ts";
 export { type Report, type ReportFile, type ReportRequest, report } from "./commands/report.ts";
 export type { FitRequest, InputText } from "./commands/request.ts";
-export { fitNonlinear, type NonlinearRequest, type NonlinearResult } from "./fitting/index.ts";
 export { type Fault, InputError, type Warning } from "./messages/index.ts";
 export type { Quantity } from "./quantity/index.ts";

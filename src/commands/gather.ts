@@ -8,6 +8,7 @@ import {
   toSeries,
   type Understood,
 } from "../bands/index.ts";
+import { loadNonlinearCore } from "../fitting/index.ts";
 import { type Fault, formatFault, InputError, type Warning } from "../messages/index.ts";
 import { type ReadOptions, readOptions } from "./read-options.ts";
 import { type FitRequest, requestSettings } from "./request.ts";
@@ -37,6 +38,8 @@ export async function gather(request: FitRequest): Promise<Gathered> {
       ? []
       : result.series.flatMap((s) => options.model.check(s, options.analysis))),
   ];
+  if (options !== null && (options.analysis.intervals === "profile" || options.model.starts !== undefined))
+    await loadNonlinearCore();
   if (wrong.length > 0 || options === null || result === null) throw new InputError(distinct(wrong));
   return { settings, series: result.series, options, warnings: result.warnings };
 }

@@ -1,7 +1,10 @@
 import { type AnalysisOptions, analyse, type SeriesResult } from "../../src/analysis/index.ts";
 import type { Band, Series } from "../../src/bands/index.ts";
+import { loadNonlinearCore } from "../../src/fitting/index.ts";
 import { findModel, type Model } from "../../src/models/index.ts";
 import { standardAir } from "../../src/quantity/index.ts";
+
+await loadNonlinearCore();
 
 /** A Morse oscillator, with a cubic term when wanted; cm-1. */
 export interface Truth {

@@ -1,12 +1,16 @@
 import { describe, expect, it } from "vitest";
 import {
   fitNonlinear,
+  loadNonlinearCore,
   profileInterval,
   propagateDistributions,
   shortestInterval,
   symmetricInterval,
 } from "../../src/fitting/index.ts";
 import { coverageFactor } from "../../src/quantity/index.ts";
+
+// The package behind the core is loaded on request.
+await loadNonlinearCore();
 
 describe("profile likelihood, Puromycin (treated), Bates & Watts 1988 (READ)", () => {
   const c = [0.02, 0.02, 0.06, 0.06, 0.11, 0.11, 0.22, 0.22, 0.56, 0.56, 1.1, 1.1];

@@ -1,6 +1,9 @@
 import { describe, expect, it } from "vitest";
-import { fitNonlinear } from "../../src/fitting/index.ts";
+import { fitNonlinear, loadNonlinearCore } from "../../src/fitting/index.ts";
 import { nistSets } from "./nist-sets.ts";
+
+// The package behind the core is loaded on request.
+await loadNonlinearCore();
 
 /** Matching significant digits, the measure NIST recommends. */
 const digits = (value: number, certified: number) =>

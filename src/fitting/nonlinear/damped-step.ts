@@ -1,4 +1,4 @@
-import { levenbergMarquardt } from "ml-levenberg-marquardt";
+import { nonlinearCore } from "./core.ts";
 import type { Whitened } from "./objective.ts";
 
 /** Length given to each column of the scaled Jacobian, so that the damping stays far from the package's limits. */
@@ -28,7 +28,7 @@ export function dampedStep(
   const row = (i: number) => scale.map((s, k) => (i < data ? jacobian[i * constants + k]! * s : 0));
   let trial: readonly number[] = [];
   try {
-    levenbergMarquardt(
+    nonlinearCore()(
       { x: index, y: index.map(residual) },
       (q) => {
         trial = [...q];
