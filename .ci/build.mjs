@@ -10,7 +10,7 @@ const root = dirname(dirname(fileURLToPath(import.meta.url)));
 const require = createRequire(import.meta.url);
 process.chdir(root);
 
-/** chartjs-node-canvas asks for `canvas` through a helper that bundlers cannot see; @napi-rs/canvas stands in for it. */
+/** chartjs-node-canvas asks for `canvas`; @napi-rs/canvas stands in for it. */
 const canvasStandIn = {
   name: "canvas-stand-in",
   setup(bundler) {
@@ -18,26 +18,63 @@ const canvasStandIn = {
   },
 };
 
-rmSync("dist", { recursive: true, force: true });
-await build({
-  entryPoints: { rungwise: "src/cli/main.ts", index: "src/index.ts" },
-  outdir: "dist",
+/** What the command needs only sometimes: each a file of its own, so that a plain fit does not have to read it. */
+const parts = {
+  csv: "csv-parse/sync",
+  toml: "smol-toml",
+  "levenberg-marquardt": "ml-levenberg-marquardt",
+  render: "./src/reporting/figures/render.ts",
+};
+
+const apart = {
+  name: "apart",
+  setup(bundler) {
+    const places = new Map(Object.entries(parts).map(([name, module]) => [module.split("/figures/").at(-1), name]));
+    const filter = /^(csv-parse\/sync|smol-toml|ml-levenberg-marquardt|\.\/render\.ts)$/;
+    bundler.onResolve({ filter }, ({ path, kind }) =>
+      kind === "entry-point"
+        ? undefined
+        : { path: `./parts/${places.get(path.replace("./", ""))}.cjs`, external: true },
+    );
+    // commander loads it for commands that are programs of their own, which there are none of; it costs a tenth of a start.
+    bundler.onResolve({ filter: /^node:child_process$/ }, () => ({ path: "none", namespace: "nothing" }));
+    bundler.onLoad({ filter: /.*/, namespace: "nothing" }, () => ({ contents: "module.exports = {}" }));
+  },
+};
+
+const common = {
   bundle: true,
-  splitting: true,
-  format: "esm",
   platform: "node",
   target: "node20.12",
   minify: true,
-  keepNames: false,
   legalComments: "none",
-  chunkNames: "parts/[name]-[hash]",
+  external: ["@napi-rs/canvas"],
+};
+/** The command starts faster as CommonJS. */
+const command = {
+  ...common,
+  format: "cjs",
+  outExtension: { ".js": ".cjs" },
+  define: { "import.meta.url": "bundleUrl" },
+  banner: { js: 'const bundleUrl=require("node:url").pathToFileURL(__filename).href;' },
+};
+
+rmSync("dist", { recursive: true, force: true });
+await build({ ...command, entryPoints: { rungwise: "src/cli/main.ts" }, outdir: "dist", plugins: [apart] });
+await build({ ...command, entryPoints: parts, outdir: "dist/parts", plugins: [canvasStandIn] });
+await build({
+  ...common,
+  entryPoints: { index: "src/index.ts" },
+  outdir: "dist/library",
+  format: "esm",
+  splitting: true,
+  chunkNames: "[name]-[hash]",
   banner: {
     js: 'import{createRequire as bundledRequire}from"node:module";const require=bundledRequire(import.meta.url);',
   },
-  external: ["@napi-rs/canvas"],
   plugins: [canvasStandIn],
 });
-chmodSync("dist/rungwise.js", 0o755);
+chmodSync("dist/rungwise.cjs", 0o755);
 
 mkdirSync("dist/fonts", { recursive: true });
 const arimo = dirname(require.resolve("@expo-google-fonts/arimo/package.json"));

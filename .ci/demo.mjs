@@ -5,5 +5,5 @@ import { fileURLToPath } from "node:url";
 
 const root = dirname(dirname(fileURLToPath(import.meta.url)));
 const demo = ["report", "datasets/demo/bonds-a-and-b.csv", "--out", "reports/demo", "--force"];
-const { status } = spawnSync(process.execPath, ["dist/rungwise.js", ...demo], { cwd: root, stdio: "inherit" });
+const { status } = spawnSync(process.execPath, ["dist/rungwise.cjs", ...demo], { cwd: root, stdio: "inherit" });
 process.exitCode = status ?? 1;

@@ -9,4 +9,6 @@ process.stdout.on("error", (error: NodeJS.ErrnoException) => {
 });
 process.once("SIGINT", () => process.exit(EXIT.interrupted));
 
-process.exitCode = await run(process.argv.slice(2));
+void run(process.argv.slice(2)).then((code) => {
+  process.exitCode = code;
+});

@@ -7,7 +7,7 @@ import { join } from "node:path";
 import { buildBench } from "./in-process.mjs";
 
 const folder = mkdtempSync(join(tmpdir(), "rungwise-bench-"));
-const command = "dist/rungwise.js";
+const command = "dist/rungwise.cjs";
 const bands = ["--series", "2885.9775 5667.9841 8346.7821 10922.803 13396.19 15768", "--bond", "1H 35Cl"];
 
 function seconds(words) {

@@ -10,7 +10,7 @@ export interface Ran {
   readonly err: string;
 }
 
-const command = resolve("dist/rungwise.js");
+const command = resolve("dist/rungwise.cjs");
 
 /** Run the built command as a child process; `npm test` builds it first. */
 export function rungwise(
