@@ -56,11 +56,13 @@ const command = {
   format: "cjs",
   outExtension: { ".js": ".cjs" },
   define: { "import.meta.url": "bundleUrl" },
+  // import() of a part becomes require(): the command runs as a script, which has no loader of modules.
+  supported: { "dynamic-import": false },
   banner: { js: 'const bundleUrl=require("node:url").pathToFileURL(__filename).href;' },
 };
 
 rmSync("dist", { recursive: true, force: true });
-await build({ ...command, entryPoints: { rungwise: "src/cli/main.ts" }, outdir: "dist", plugins: [apart] });
+await build({ ...command, entryPoints: { command: "src/cli/main.ts" }, outdir: "dist", plugins: [apart] });
 await build({ ...command, entryPoints: parts, outdir: "dist/parts", plugins: [canvasStandIn] });
 await build({
   ...common,
@@ -74,6 +76,7 @@ await build({
   },
   plugins: [canvasStandIn],
 });
+copyFileSync(".ci/start.cjs", "dist/rungwise.cjs");
 chmodSync("dist/rungwise.cjs", 0o755);
 
 mkdirSync("dist/fonts", { recursive: true });
@@ -93,5 +96,6 @@ const types = [
   "--rootDir",
   "src",
 ];
+spawnSync(process.execPath, [".ci/cache.cjs"], { stdio: "ignore" });
 const { status } = spawnSync(process.execPath, [tsc, "-p", ".ci/types.json", ...types], { stdio: "inherit" });
 process.exitCode = status ?? 1;

@@ -1,4 +1,3 @@
-#!/usr/bin/env node
 import { EXIT } from "../messages/index.ts";
 import { run } from "./run.ts";
 
