@@ -53,8 +53,11 @@ export function chooseTerms(series: Series, model: Model, options: AnalysisOptio
   return { terms: least + chosen, comparison, warnings: verdict(fits, chosen, model) };
 }
 
+/** What the tests need of a solution. */
+export type Stated = Pick<Solution, "stated" | "sigmaKnown">;
+
 /** The test of one more constant; null when nothing is left to test it with. */
-export function stepTest(fewer: Solution, more: Solution): Step | null {
+export function stepTest(fewer: Stated, more: Stated): Step | null {
   if (!fewer.sigmaKnown && fewer.stated.exact) return null;
   const gain = Math.max(0, fewer.stated.chiSquare - more.stated.chiSquare);
   if (fewer.sigmaKnown) {

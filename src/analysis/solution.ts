@@ -8,7 +8,6 @@ import {
   fitRobust,
   fitWithScatter,
   type LinearFit,
-  type Prepared,
   type Problem,
   type Treatment,
   UNTREATED,
@@ -120,27 +119,6 @@ export function trySolve(series: Series, model: Model, options: AnalysisOptions)
     if (error instanceof InputError) return null;
     throw error;
   }
-}
-
-/** Some of the used bands fitted alone, with the errors and the treatment of the whole fit; null when they do not determine it. */
-export function fitSome(solution: Solution, bands: readonly Band[]): LinearFit | null {
-  const { model, options, series, treatment, sigmaKnown } = solution;
-  const errors = errorModelOf(series, bands, model);
-  const prepared = model.prepare(bands, options);
-  // Too few bands are seen beforehand: an exception costs more than a fit.
-  if (new Set(bands.map((band) => band.label)).size < freeConstants(prepared)) return null;
-  const problem = { ...prepared, observed: bands.map((band) => band.position) };
-  try {
-    return fitLinear({ ...problem, errors: sigmaKnown ? errors : { ...errors, sigmas: null } }, treatment);
-  } catch (error) {
-    if (error instanceof UndeterminedError) return null;
-    throw error;
-  }
-}
-
-/** How many constants the bands must determine: neither held nor observed by a prior. */
-function freeConstants({ parameters }: Prepared): number {
-  return parameters.filter((p) => p.held === undefined && p.prior === undefined).length;
 }
 
 /** The untreated fit of a model that is not linear in its constants, from starts of the model's own. */

@@ -34,7 +34,7 @@ export function standsOut({ used, tests, stated, sigmaKnown }: Solution): Outlie
 }
 
 /** Whether leaving the band out explains the misfit better than a further constant does. */
-export function betterThanTerm(band: Outlier | null, here: Solution, more: Solution): boolean {
+export function betterThanTerm(band: Outlier | null, here: Solution, more: Pick<Solution, "stated">): boolean {
   if (band === null) return false;
   const { sigmaKnown, stated } = here;
   if (sigmaKnown) return band.remaining + BAND_MARGIN < more.stated.chiSquare;

@@ -9,6 +9,8 @@ export interface Asked {
 /** Where a job writes to. */
 export interface Console {
   readonly out: (text: string) => void;
+  /** resolves when the reader of `out` has kept up */
+  readonly settled: () => Promise<void>;
   readonly err: (text: string) => void;
   readonly colourOut: boolean;
   readonly colourErr: boolean;

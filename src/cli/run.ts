@@ -16,6 +16,10 @@ export async function run(words: readonly string[]): Promise<number> {
     const plain = options["no-color"] === true;
     const console: Console = {
       out,
+      settled: () =>
+        process.stdout.writableNeedDrain
+          ? new Promise((resolve) => process.stdout.once("drain", () => resolve()))
+          : Promise.resolve(),
       err,
       colourOut: !plain && wantsColour(process.stdout),
       colourErr: !plain && wantsColour(process.stderr),

@@ -1,7 +1,7 @@
 export * from "./criteria.ts";
 export * from "./diagnostics.ts";
 export * from "./excess.ts";
-export { dot, estimator, fitLinear, type LinearFit, UndeterminedError } from "./linear.ts";
+export { dot, estimator, fitLinear, fitValues, type LinearFit, UndeterminedError } from "./linear.ts";
 export { loadNonlinearCore } from "./nonlinear/core.ts";
 export * from "./nonlinear/fit-nonlinear.ts";
 export * from "./problem.ts";

@@ -84,6 +84,19 @@ export function fitLinear(problem: Problem, treatment: Treatment = UNTREATED): L
   };
 }
 
+/** The constants alone, without uncertainties and tests: for many small fits. Priors count as with σ known. Throws as fitLinear. */
+export function fitValues(problem: Problem, treatment: Treatment): number[] {
+  const { parameters, observed, errors } = problem;
+  const values = parameters.map((p) => p.held ?? 0);
+  const { jacobian } = problem.evaluate(values);
+  const free = parameters.flatMap((p, k) => (p.held === undefined ? [k] : []));
+  const priors = free.filter((k) => parameters[k]!.prior !== undefined);
+  const white = whitening(errors, treatment, observed.length);
+  const { solution } = solveWhitened(problem, jacobian, free, priors, white, 1);
+  for (let j = 0; j < free.length; j++) values[free[j]!] = solution[j]!;
+  return values;
+}
+
 /** Solve for the free constants; with unknown σ a prior weighs unit/σ, where `unit` is the present residual deviation. */
 function solveWhitened(
   { parameters, observed, errors }: Problem,
