@@ -15,6 +15,9 @@ export function fitWarnings(solution: Solution, termsChosen: boolean): Warning[]
   ];
 }
 
+/** A few digits, without a power of ten. */
+const short = (x: number, digits = 3) => String(Number(x.toPrecision(digits)));
+
 const percent = (p: number) => (p < 1e-4 ? "below 0.01 %" : `${Number((p * 100).toPrecision(2))} %`);
 
 function aboutSigma({ sigmaKnown, fit, by, options }: Solution): Warning[] {
@@ -47,7 +50,7 @@ function aboutSigma({ sigmaKnown, fit, by, options }: Solution): Warning[] {
 
 function aboutChiSquare({ probability, stated, excess }: Solution): Warning[] {
   if (probability === null) return [];
-  const ratio = `χ² = ${stated.chiSquare.toPrecision(4)} on ${stated.degreesOfFreedom} degree${stated.degreesOfFreedom === 1 ? "" : "s"} of freedom (probability ${percent(probability)})`;
+  const ratio = `χ² = ${short(stated.chiSquare, 4)} on ${stated.degreesOfFreedom} degree${stated.degreesOfFreedom === 1 ? "" : "s"} of freedom (probability ${percent(probability)})`;
   if (probability > 1 - IMPROBABLE)
     return [
       {
@@ -57,8 +60,8 @@ function aboutChiSquare({ probability, stated, excess }: Solution): Warning[] {
     ];
   if (probability >= IMPROBABLE) return [];
   const did = {
-    scatter: `a scatter τ = ${(excess.value ?? 0).toPrecision(3)} cm-1 common to all bands was added (--excess birge or none for another treatment)`,
-    birge: `the stated σ were multiplied by the Birge factor ${(excess.value ?? 0).toPrecision(3)}`,
+    scatter: `a scatter τ = ${short(excess.value ?? 0)} cm-1 common to all bands was added (--excess birge or none for another treatment)`,
+    birge: `the stated σ were multiplied by the Birge factor ${short(excess.value ?? 0)}`,
     none: "nothing was added, as asked: the uncertainties below are too small",
   }[excess.kind];
   return [
@@ -83,7 +86,7 @@ function aboutTermsAndBands(solution: Solution, termsChosen: boolean): Warning[]
     ];
   if (band === null) return [];
   const measure = solution.sigmaKnown ? "χ²" : "the residual sum of squares";
-  const [before, after] = [solution.stated.chiSquare, band.remaining].map((x) => x.toPrecision(3));
+  const [before, after] = [solution.stated.chiSquare, band.remaining].map((x) => short(x));
   return [
     {
       code: "band-stands-out",
@@ -112,7 +115,7 @@ function aboutMedium(solution: Solution): Warning[] {
   return [
     {
       code: "medium-suspected",
-      message: `χ² would fall from ${solution.stated.chiSquare.toPrecision(3)} to ${other.chiSquare.toPrecision(3)} if the wavelengths were in ${other.medium}: check what the instrument reports, and say --medium ${other.medium} if so`,
+      message: `χ² would fall from ${short(solution.stated.chiSquare)} to ${short(other.chiSquare)} if the wavelengths were in ${other.medium}: check what the instrument reports, and say --medium ${other.medium} if so`,
     },
   ];
 }

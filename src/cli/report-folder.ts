@@ -61,18 +61,23 @@ function lookUp(path: string) {
   }
 }
 
+/** Make a folder and those above it, one at a time: where the system refuses one, a recursive mkdir may try for ever. */
+function makeFolder(path: string): void {
+  if (existsSync(path)) return;
+  makeFolder(dirname(path));
+  mkdirSync(path);
+}
+
 /** Write a report beside its place and swap it in, so that an existing one is never half overwritten. */
 export function writeFolder(out: string, files: readonly ReportFile[]): void {
   const place = resolve(out);
   const fresh = `${place}.new-${process.pid}`;
   const old = `${place}.old-${process.pid}`;
   try {
-    if (!existsSync(dirname(place))) mkdirSync(dirname(place), { recursive: true });
-    // One folder at a time: where the system refuses a folder, a recursive mkdir may try for ever.
-    mkdirSync(fresh);
+    makeFolder(dirname(place));
+    makeFolder(fresh);
     for (const { name, content } of files) {
-      const folder = dirname(join(fresh, name));
-      if (!existsSync(folder)) mkdirSync(folder);
+      makeFolder(dirname(join(fresh, name)));
       writeFileSync(join(fresh, name), content);
     }
     const replaced = existsSync(place);

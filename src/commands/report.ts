@@ -31,9 +31,11 @@ export interface Report {
  */
 export async function report(request: ReportRequest, assets?: FigureAssets): Promise<Report> {
   const { width = 85, ...rest } = request;
-  const gathered = await gather(rest);
-  const { input, again } = reproducible(rest);
-  const head = await documentHead(gathered, { ...rest, input });
+  // Faults name what the user gave; the document names what the report keeps, so that it can be made again to the byte.
+  await gather(rest);
+  const { request: kept, input, again } = reproducible(rest);
+  const gathered = await gather(kept);
+  const head = await documentHead(gathered, kept);
   const document: FitDocument = { ...head, series: [...fitEach(gathered)] };
   const { notation, symbols } = gathered.options;
   const specs = figuresFor(document.series, { widthMm: width, notation });
@@ -62,19 +64,26 @@ export async function report(request: ReportRequest, assets?: FigureAssets): Pro
   };
 }
 
-/** The input under the name it has in the report, and the command that makes the report again from there. */
-function reproducible(request: FitRequest): { input: InputText; again: string } {
+/** The request with the input under the name it has in the report, and the command that makes the report again from there. */
+function reproducible(request: FitRequest): { request: FitRequest; input: InputText; again: string } {
   const { input, ...flags } = request;
   if (input === undefined) {
     const source = "input.toml";
+    const toml: InputText = { text: settingsToml(requestSettings(request)), source, format: "toml" };
     return {
-      input: { text: settingsToml(requestSettings(request)), source, format: "toml" },
+      request: { input: toml },
+      input: toml,
       again: `rungwise report ${source} --out again`,
     };
   }
   const source = `input.${input.format}`;
   const words = [...requestSettings(flags)].map(([name, { value }]) => `--${name} ${quoted(value)}`);
-  return { input: { ...input, source }, again: ["rungwise report", source, ...words, "--out again"].join(" ") };
+  const named = { ...input, source };
+  return {
+    request: { ...flags, input: named },
+    input: named,
+    again: ["rungwise report", source, ...words, "--out again"].join(" "),
+  };
 }
 
 /** A word as a POSIX shell takes it. */

@@ -1,7 +1,8 @@
 import { normalUpperTail, studentUpperTail } from "./distributions.ts";
 import { logGamma } from "./special-functions.ts";
 
-const remembered = new Map<string, number>();
+/** Factors already computed, by level and degrees of freedom (0 for the normal distribution). */
+const remembered = new Map<number, Map<number, number>>();
 
 /**
  * Factor k such that ±k standard uncertainties cover `level` (0.95, say): Student's t for `degreesOfFreedom` ≥ 1, the
@@ -10,14 +11,15 @@ const remembered = new Map<string, number>();
  * @throws RangeError for a level outside 0…1 (both excluded) or degrees of freedom that are not positive.
  */
 export function coverageFactor(level: number, degreesOfFreedom: number | null): number {
-  const key = `${level} ${degreesOfFreedom}`;
-  const before = remembered.get(key);
-  if (before !== undefined) return before;
+  const known = remembered.get(level)?.get(degreesOfFreedom ?? 0);
+  if (known !== undefined) return known;
   if (!(level > 0 && level < 1)) throw new RangeError(`a level of coverage lies between 0 and 1, not ${level}`);
   const factor = twoSidedQuantile(1 - level, degreesOfFreedom);
   // a run meets a handful of pairs; the cap is for a long-lived program
-  if (remembered.size > 1000) remembered.clear();
-  remembered.set(key, factor);
+  if (remembered.size > 100) remembered.clear();
+  const ofLevel = remembered.get(level) ?? new Map<number, number>();
+  if (ofLevel.size > 1000) ofLevel.clear();
+  remembered.set(level, ofLevel.set(degreesOfFreedom ?? 0, factor));
   return factor;
 }
 

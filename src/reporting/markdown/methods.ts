@@ -75,7 +75,9 @@ export function methods({ document, notation, symbols, citations, modelReference
     );
   text.push(`Units are converted with the constants of ${constantsSet} ${cite("codata2022")}.`);
   if (any(({ bond }) => bond !== null && !bond.startsWith("reduced mass")))
-    text.push(`Isotope masses: AME2020 ${cite("ame2020")}.`);
+    text.push(
+      `Isotope masses: AME2020 ${cite("ame2020")} for H, D, T, 11B, Cl, Br and I, an earlier evaluation alike to 2e-8 for the others.`,
+    );
   return text.map((one) => unescapeCitations(sentence(one))).join(" ");
 }
 

@@ -10,7 +10,11 @@ export function reproduction({ tool, input, request, series }: FitDocument, comm
     `- version: ${verbatim(tool.name)} ${verbatim(tool.version)}`,
     `- input: ${input === null ? "settings alone" : `${verbatim(input.source)}, sha256 \`${input.sha256}\``}`,
     `- constants: ${constantsSet}`,
-    ...(masses ? ["- isotope masses: AME2020"] : []),
+    ...(masses
+      ? [
+          "- isotope masses: AME2020 for H, D, T, 11B, Cl, Br and I; an earlier evaluation, alike to 2e-8, for the others",
+        ]
+      : []),
   ];
   const settings = Object.entries(request);
   return [
