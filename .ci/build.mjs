@@ -1,19 +1,22 @@
 // Bundles the command and the library into dist/, so that the only run-time dependency is the canvas.
 import { spawnSync } from "node:child_process";
-import { chmodSync, copyFileSync, mkdirSync, rmSync } from "node:fs";
+import { chmodSync, copyFileSync, mkdirSync, rmSync, writeFileSync } from "node:fs";
 import { createRequire } from "node:module";
 import { dirname, join } from "node:path";
 import { fileURLToPath } from "node:url";
 import { build } from "esbuild";
+import { notices } from "./notices.mjs";
 
 const root = dirname(dirname(fileURLToPath(import.meta.url)));
 const require = createRequire(import.meta.url);
 process.chdir(root);
 
-/** chartjs-node-canvas asks for `canvas`; @napi-rs/canvas stands in for it. */
+/** chartjs-node-canvas asks for `canvas` through a helper that bundlers cannot see; @napi-rs/canvas stands in for it. */
 const canvasStandIn = {
   name: "canvas-stand-in",
   setup(bundler) {
+    const contents = 'exports.freshRequire = () => require("@napi-rs/canvas/node-canvas");';
+    bundler.onLoad({ filter: /chartjs-node-canvas.dist.freshRequire\.js$/ }, () => ({ contents }));
     bundler.onResolve({ filter: /^canvas$/ }, () => ({ path: "@napi-rs/canvas/node-canvas", external: true }));
   },
 };
@@ -48,6 +51,7 @@ const common = {
   target: "node20.12",
   minify: true,
   legalComments: "none",
+  metafile: true,
   external: ["@napi-rs/canvas"],
 };
 /** The command starts faster as CommonJS. */
@@ -62,20 +66,23 @@ const command = {
 };
 
 rmSync("dist", { recursive: true, force: true });
-await build({ ...command, entryPoints: { command: "src/cli/main.ts" }, outdir: "dist", plugins: [apart] });
-await build({ ...command, entryPoints: parts, outdir: "dist/parts", plugins: [canvasStandIn] });
-await build({
-  ...common,
-  entryPoints: { index: "src/index.ts" },
-  outdir: "dist/library",
-  format: "esm",
-  splitting: true,
-  chunkNames: "[name]-[hash]",
-  banner: {
-    js: 'import{createRequire as bundledRequire}from"node:module";const require=bundledRequire(import.meta.url);',
-  },
-  plugins: [canvasStandIn],
-});
+const builds = [];
+builds.push(await build({ ...command, entryPoints: { command: "src/cli/main.ts" }, outdir: "dist", plugins: [apart] }));
+builds.push(await build({ ...command, entryPoints: parts, outdir: "dist/parts", plugins: [canvasStandIn] }));
+builds.push(
+  await build({
+    ...common,
+    entryPoints: { index: "src/index.ts" },
+    outdir: "dist/library",
+    format: "esm",
+    splitting: true,
+    chunkNames: "[name]-[hash]",
+    banner: {
+      js: 'import{createRequire as bundledRequire}from"node:module";const require=bundledRequire(import.meta.url);',
+    },
+    plugins: [canvasStandIn],
+  }),
+);
 copyFileSync(".ci/start.cjs", "dist/rungwise.cjs");
 chmodSync("dist/rungwise.cjs", 0o755);
 
@@ -83,6 +90,13 @@ mkdirSync("dist/fonts", { recursive: true });
 const arimo = dirname(require.resolve("@expo-google-fonts/arimo/package.json"));
 copyFileSync(join(arimo, "400Regular/Arimo_400Regular.ttf"), "dist/fonts/Arimo-Regular.ttf");
 copyFileSync(join(arimo, "400Regular_Italic/Arimo_400Regular_Italic.ttf"), "dist/fonts/Arimo-Italic.ttf");
+writeFileSync(
+  "dist/THIRD-PARTY-NOTICES.md",
+  notices(
+    builds.map(({ metafile }) => metafile),
+    ["node_modules/@expo-google-fonts/arimo"],
+  ),
+);
 copyFileSync(join(arimo, "LICENSE_FONT"), "dist/fonts/LICENSE");
 
 const tsc = join(dirname(require.resolve("typescript/package.json")), "bin/tsc");

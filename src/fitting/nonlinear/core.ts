@@ -1,6 +1,15 @@
-import type { levenbergMarquardt } from "ml-levenberg-marquardt";
-
-type Core = typeof levenbergMarquardt;
+/** What is used of the package; spelt out, so that the types of the library do not ask for it. */
+type Core = (
+  data: { readonly x: number[]; readonly y: number[] },
+  model: (q: number[]) => (x: number) => number,
+  options: {
+    readonly initialValues: number[];
+    readonly jacobianFunction: (q: number[]) => (x: number) => number[];
+    readonly damping: number;
+    readonly maxIterations: number;
+    readonly errorTolerance: number;
+  },
+) => unknown;
 
 let core: Core | null = null;
 
