@@ -9,7 +9,7 @@ const at = process.argv.indexOf("--into");
 const into = at < 0 ? join(root, "reports") : process.argv[at + 1];
 
 const samples = {
-  hcl: ["datasets/hcl-h35cl.csv", "--terms", "2", "--be", "10.593416", "--alpha-e", "0.307181"],
+  hcl: ["datasets/hcl-h35cl.csv", "--terms", "2", "--be", "10.593416", "--alpha-e", "0.307181", "--accepted", "35759(5)"],
   "two-bonds": ["datasets/demo/bonds-a-and-b.csv"],
   co: ["datasets/co-12c16o.csv", "--terms", "4"],
 };

@@ -2,6 +2,7 @@ import type { Series } from "../bands/index.ts";
 import { informationCriteria } from "../fitting/index.ts";
 import type { Warning } from "../messages/index.ts";
 import type { Model, Well } from "../models/index.ts";
+import { acceptedD0 } from "./accepted.ts";
 import { chooseTerms } from "./choice-of-terms.ts";
 import { derivedNumbers, highestLevel } from "./derived.ts";
 import { dissociationRows } from "./dissociation/rows.ts";
@@ -35,6 +36,7 @@ export function analyse(series: Series, model: Model, given: AnalysisOptions): S
   const { parameters } = model.prepare([], options);
   const free = solution.stated.keys.flatMap((key, k) => (options.fixed[key]?.sigma === null ? [] : [k]));
   const { first, warnings, ...follows } = whatFollows(solution);
+  const known = acceptedD0(solution);
   return refineIntervals(solution, {
     name: series.name,
     model: model.name,
@@ -54,6 +56,7 @@ export function analyse(series: Series, model: Model, given: AnalysisOptions): S
     quality: qualityOf(solution),
     bands: bandResults(solution),
     ...follows,
+    accepted: known.accepted,
     comparison: choice?.comparison ?? null,
     intervals: null,
     fitReport: {
@@ -69,6 +72,7 @@ export function analyse(series: Series, model: Model, given: AnalysisOptions): S
       // Where the law itself is refused, no single band is to blame.
       ...fitWarnings(solution, choice !== null).filter(({ code }) => first.length === 0 || code !== "band-stands-out"),
       ...warnings,
+      ...known.warnings,
     ],
   });
 }

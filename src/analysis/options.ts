@@ -21,6 +21,8 @@ export interface AnalysisOptions extends ModelOptions {
   /** highest level to predict; null: three beyond the last band */
   readonly upTo: number | null;
   readonly air: AirConditions;
+  /** an accepted D0 in cm-1 to compare with, with its standard uncertainty if known; null: none */
+  readonly accepted: { readonly value: number; readonly sigma: number | null } | null;
   /** rotational constants in cm-1, bond length in Å */
   readonly be: number | null;
   readonly alphaE: number | null;

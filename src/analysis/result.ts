@@ -153,6 +153,8 @@ export interface SeriesResult {
   readonly quality: Quality;
   readonly bands: readonly BandResult[];
   readonly dissociation: readonly DissociationRow[];
+  /** an accepted D0 given by the user, cm-1; null without one */
+  readonly accepted: Quantity | null;
   /** null for models without a well around the minimum */
   readonly derived: Derived | null;
   readonly predictions: readonly Prediction[];

@@ -34,6 +34,7 @@ export const settingNames: readonly string[] = [
   "constants",
   "be",
   "alpha-e",
+  "accepted",
   "re",
   "excess",
   "scatter",

@@ -59,6 +59,7 @@ export const moleculeFlags: readonly Flag[] = [
   { name: "name", value: "TEXT", help: "what the output calls the oscillator" },
   { name: "be", value: "B", help: "rotational constant Be in cm-1, for Y00" },
   { name: "alpha-e", value: "A", help: "vibration-rotation constant αe in cm-1, for Y00" },
+  { name: "accepted", value: "D0", help: "accepted D0 to compare with, such as 35759(5) or 4.4336 eV" },
   { name: "re", value: "R", help: "bond length re in Å, in place of --be (with a bond)" },
 ];
 

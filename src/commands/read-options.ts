@@ -3,7 +3,15 @@ import type { Setting, Settings } from "../bands/index.ts";
 import type { RobustKind } from "../fitting/index.ts";
 import { type Fault, nearest } from "../messages/index.ts";
 import { type Fixed, findModel, type Model, modelNames, type Notation } from "../models/index.ts";
-import { type AirConditions, readAir, readMeasurement, standardAir } from "../quantity/index.ts";
+import {
+  type AirConditions,
+  isWavelength,
+  readAir,
+  readMeasurement,
+  splitUnit,
+  standardAir,
+  toWavenumber,
+} from "../quantity/index.ts";
 
 /** The settings about the fit, read and checked. */
 export interface ReadOptions {
@@ -81,6 +89,7 @@ export async function readOptions(
     seed: reader.number("seed", whole(0, 2 ** 31), "write a whole number such as 1") ?? 1,
     upTo: reader.number("up-to", whole(1, 500), "write the highest level to predict, such as 9"),
     air: readAirConditions(reader),
+    accepted: readAccepted(reader),
     be: reader.number("be", positive, "write Be in cm-1, such as 10.593"),
     alphaE: reader.number("alpha-e", Number.isFinite, "write αe in cm-1, such as 0.307"),
     re: reader.number("re", positive, "write re in Å, such as 1.2746"),
@@ -110,6 +119,21 @@ async function readModel(reader: Reader): Promise<Model | null> {
     );
   }
   return model;
+}
+
+/** `--accepted "35759(5)"`, in cm-1 or with a unit of energy. */
+function readAccepted(reader: Reader): AnalysisOptions["accepted"] {
+  const setting = reader.settings.get("accepted");
+  if (setting === undefined) return null;
+  const mend = "write an accepted D0 such as 35759(5), or with its unit, 4.4336 eV";
+  const { number, unit } = splitUnit(setting.value);
+  const read = readMeasurement(number);
+  if (!read.ok) return reader.fault(setting, "not-a-number", read.what, mend);
+  if (!(read.value > 0)) return reader.fault(setting, "out-of-range", "an accepted D0 must be positive", mend);
+  if (unit !== null && isWavelength(unit))
+    return reader.fault(setting, "unknown-unit", `${unit} is no unit of a dissociation energy`, mend);
+  const toWavenumbers = (x: number) => toWavenumber(x, unit ?? "cm-1");
+  return { value: toWavenumbers(read.value), sigma: read.sigma === null ? null : toWavenumbers(read.sigma) };
 }
 
 function readAirConditions(reader: Reader): AirConditions {

@@ -53,6 +53,8 @@ export interface FitRequest {
   readonly be?: Word;
   readonly alphaE?: Word;
   readonly re?: Word;
+  /** an accepted D0 to compare with, such as "35759(5)" cm-1 or "4.4336 eV" */
+  readonly accepted?: Word;
   /** @default "scatter" */
   readonly excess?: string;
   /** a given scatter τ in cm-1 */

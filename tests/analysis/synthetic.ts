@@ -26,6 +26,7 @@ export const defaults: AnalysisOptions = {
   seed: 1,
   upTo: null,
   air: standardAir,
+  accepted: null,
   be: null,
   alphaE: null,
   re: null,

@@ -161,6 +161,9 @@ const cases: [string, FitRequest, string[], string[]][] = [
     ["unknown-choice"],
     ["scatter or birge or none"],
   ],
+  ["an accepted D0 that is no number", { series: "2885 5667 8346", accepted: "big" }, ["not-a-number"], ["35759(5)"]],
+  ["an accepted D0 of zero", { series: "2885 5667 8346", accepted: 0 }, ["out-of-range"], ["positive"]],
+  ["an accepted D0 as a wavelength", { series: "2885 5667 8346", accepted: "280 nm" }, ["unknown-unit"], ["eV"]],
   ["a coverage above one", { series: "2885 5667 8346", coverage: 95 }, ["out-of-range"], ["between 0 and 1"]],
   [
     "a companion where the band is",

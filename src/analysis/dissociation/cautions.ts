@@ -6,5 +6,5 @@ export const CAUTIONS = {
   turningPoint: "top of the fitted polynomial far outside the data: usually the worst answer",
   spacingSum:
     "observed levels plus a straight-line remainder through the last three spacings; the remainder is an extrapolation",
-  frozenFrame: "for one bond of a polyatomic molecule D is that of a frozen frame, not a relaxed D0 or D298",
+  frozenFrame: "if the bond is one of a polyatomic molecule, D is that of a frozen frame, not a relaxed D0 or D298",
 } as const;

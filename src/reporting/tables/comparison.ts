@@ -3,7 +3,7 @@ import { notDetermined } from "../../quantity/index.ts";
 import { type Symbols, symbolOf } from "../symbols.ts";
 import type { Column, TableData } from "../table-data.ts";
 import { probability, quantity, size, statistic } from "../text/cells.ts";
-import { methodNames } from "./dissociation.ts";
+import { methodNames } from "../text/method-names.ts";
 
 /** Constants of several series side by side, one series a row. */
 export function constantsComparison(all: readonly SeriesResult[], symbols: Symbols): TableData {

@@ -161,6 +161,7 @@ export function sampleResult(sample: Sample = {}): SeriesResult {
         observed: used.some((d) => d.label === label),
       };
     }),
+    accepted: null,
     comparison: null,
     intervals: null,
     stability: [],
