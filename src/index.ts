@@ -8,6 +8,7 @@ export type {
   SeriesResult,
   StabilityRow,
 } from "./analysis/index.ts";
+export { type CheckDocument, type CheckRequest, check, type Difference } from "./commands/check.ts";
 export { type ConvertDocument, type ConvertRequest, convert } from "./commands/convert.ts";
 export { fit } from "./commands/fit.ts";
 export { fitNonlinear, type NonlinearRequest, type NonlinearResult } from "./commands/fit-nonlinear.ts";

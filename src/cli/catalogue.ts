@@ -69,6 +69,14 @@ export const catalogue: readonly Entry[] = [
     load: async () => (await import("./commands/convert.ts")).convertJob,
   },
   {
+    name: "check",
+    summary: "make a stored report again in memory and compare every number",
+    argument: "[DIR]",
+    groups: [common],
+    examples: ["rungwise check hcl"],
+    load: async () => (await import("./commands/check.ts")).checkJob,
+  },
+  {
     name: "datasets",
     summary: "list the published series that come along, or print one",
     argument: "[NAME]",

@@ -70,6 +70,27 @@ describe("report", () => {
     expect(JSON.parse(again.out).series[0].constants).toEqual(stored.series[0].constants);
   });
 
+  it("check makes it again, and finds a number that was changed", () => {
+    const cwd = emptyFolder();
+    rungwise(["report", ...bands, "--sigma", "0.01", "--out", "r"], { cwd });
+    expect(rungwise(["check", "r"], { cwd })).toMatchObject({ code: 0 });
+    const file = join(cwd, "r/result.json");
+    const result = JSON.parse(readFileSync(file, "utf8"));
+    result.series[0].constants.we.value += 0.01;
+    writeFileSync(file, JSON.stringify(result));
+    const { code, out } = rungwise(["check", "r/result.json", "--json"], { cwd });
+    expect(code).toBe(2);
+    const { ok, differences } = JSON.parse(out);
+    expect(ok).toBe(false);
+    expect(differences.map(({ where }: { where: string }) => where)).toEqual(["series[0].constants.we.value"]);
+    expect(rungwise(["check", "nowhere"], { cwd }).code).toBe(2);
+  });
+
+  it("check agrees with every sample report of the repository", () => {
+    for (const name of ["hcl", "co", "two-bonds"])
+      expect(rungwise(["check", `reports/${name}`]).out).toContain("comes out again");
+  });
+
   it("predict reads its result.json", () => {
     const cwd = emptyFolder();
     rungwise(["report", ...bands, "--out", "r"], { cwd });

@@ -1,3 +1,4 @@
+export { renderCheck } from "./render-check.ts";
 export { renderConversion } from "./render-conversion.ts";
 export { renderDatasets } from "./render-datasets.ts";
 export { type FitTextOptions, renderFit } from "./render-fit.ts";
