@@ -145,7 +145,12 @@ function byProfile(solution: Solution): Refine {
   const request = profileRequest(solution);
   return ({ key, scalar }, quantity, record) => {
     const bounds = (level: number): readonly [number, number] | null => {
-      const { low, high, curve } = profileInterval(request, scalar, coverageFactor(level, by.degreesOfFreedom));
+      const { low, high, curve } = profileInterval(
+        request,
+        scalar,
+        coverageFactor(level, by.degreesOfFreedom),
+        record !== null && level === 0.95,
+      );
       if (record !== null && level === 0.95)
         record.profiles.push({ key, points: curve.map(({ value, rise }) => [value, rise] as const) });
       return low === null || high === null ? null : [low, high];

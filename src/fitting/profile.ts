@@ -24,14 +24,18 @@ export interface ProfileRequest extends Omit<NonlinearRequest, "start"> {
   readonly variance: number;
 }
 
+/** Where a curve that is drawn gets further points, as shares of the way to the bound. */
+const DRAWN_AT = [0.8, 0.6, 0.4, 0.2, 1.2, 1.4];
+
 /** Share of a standard deviation to which a bound is found. */
 const TOLERANCE = 1e-7;
 
 /**
  * Profile-likelihood interval of a scalar (Bates & Watts 1988, 6.1): the constants are reparametrised so that the scalar is one of them, it
  * is held at trial values, the rest is fitted anew by the nonlinear core, and the bounds lie where χ² has risen by `factor`² times the variance.
+ * `drawn`: with further points between, for a picture.
  */
-export function profileInterval(fit: ProfileRequest, scalar: Scalar, factor: number): Profile {
+export function profileInterval(fit: ProfileRequest, scalar: Scalar, factor: number, drawn = false): Profile {
   const centre = scalar.value(fit.best);
   const gradient = scalar.gradient(fit.best);
   const u = Math.sqrt(linearVariance(fit, gradient));
@@ -50,6 +54,14 @@ export function profileInterval(fit: ProfileRequest, scalar: Scalar, factor: num
   };
   const low = side(-1);
   const high = side(1);
+  if (drawn)
+    for (const share of DRAWN_AT)
+      for (const reach of [low === null ? null : -low, high])
+        if (reach !== null) {
+          const value = centre + share * reach;
+          const r = rise(value);
+          if (Number.isFinite(r)) curve.push({ value, rise: r });
+        }
   curve.sort((a, b) => a.value - b.value);
   return { low: low === null ? null : centre - low, high: high === null ? null : centre + high, curve };
 }

@@ -9,6 +9,7 @@ const contents = [
   "bands.csv",
   "constants.csv",
   "figures/birge-sponer.png",
+  "figures/dissociation.png",
   "figures/positions.png",
   "figures/potential.png",
   "figures/residuals.png",
@@ -40,7 +41,7 @@ function png(file: string): { width: number; perMetre: number; densityBeforeData
 }
 
 describe("report", () => {
-  it("writes the folder of the contract, four figures 2008 px wide at 23622 px/m", () => {
+  it("writes the folder of the contract, its figures 2008 px wide at 23622 px/m", () => {
     const cwd = emptyFolder();
     const { code, out } = rungwise(["report", ...bands, "--out", "hcl"], { cwd });
     expect([code, out]).toEqual([0, "hcl/report.md\n"]);

@@ -58,7 +58,7 @@ describe("the tarball", () => {
       encoding: "utf8",
     });
     expect(stderr).toBe("");
-    expect(stdout.trim()).toBe("2989.467 1 10");
+    expect(stdout.trim()).toBe("2989.467 1 11");
   });
 
   it("has types that a strict program compiles against", () => {
