@@ -33,7 +33,7 @@ export const references = {
     where: "Phys. Rev. 34, 57",
     doi: "10.1103/PhysRev.34.57",
   },
-  // from memory; volume and page also in the brief of this work
+  // from memory
   birge1926: {
     authors: "R. T. Birge, H. Sponer",
     year: 1926,
@@ -92,6 +92,56 @@ export const references = {
     year: 1965,
     title: "Numerical methods for solving linear least squares problems",
     where: "Numer. Math. 7, 206",
+  },
+  // from memory
+  levenberg1944: {
+    authors: "K. Levenberg",
+    year: 1944,
+    title: "A method for the solution of certain non-linear problems in least squares",
+    where: "Q. Appl. Math. 2, 164",
+  },
+  // from memory
+  marquardt1963: {
+    authors: "D. W. Marquardt",
+    year: 1963,
+    title: "An algorithm for least-squares estimation of nonlinear parameters",
+    where: "J. Soc. Ind. Appl. Math. 11, 431",
+  },
+  // from memory
+  transtrum2012: {
+    authors: "M. K. Transtrum, J. P. Sethna",
+    year: 2012,
+    title: "Improvements to the Levenberg-Marquardt algorithm for nonlinear least-squares minimization",
+    where: "arXiv:1201.5885",
+  },
+  // from memory
+  bateswatts1988: {
+    authors: "D. M. Bates, D. G. Watts",
+    year: 1988,
+    title: "Nonlinear Regression Analysis and Its Applications",
+    where: "Wiley, New York",
+  },
+  // from memory
+  huber1981: {
+    authors: "P. J. Huber",
+    year: 1981,
+    title: "Robust Statistics",
+    where: "Wiley, New York",
+  },
+  // from memory
+  beatontukey1974: {
+    authors: "A. E. Beaton, J. W. Tukey",
+    year: 1974,
+    title: "The fitting of power series, meaning polynomials, illustrated on band-spectroscopic data",
+    where: "Technometrics 16, 147",
+  },
+  // from memory
+  jcgm101: {
+    authors: "Joint Committee for Guides in Metrology",
+    year: 2008,
+    title:
+      "Evaluation of measurement data: supplement 1 to the guide to the expression of uncertainty in measurement, propagation of distributions using a Monte Carlo method",
+    where: "JCGM 101:2008, BIPM, Sèvres",
   },
   // from memory
   cook1982: {

@@ -4,6 +4,7 @@ import { constantsSet } from "../../quantity/index.ts";
 import { isReference } from "../references.ts";
 import { type Symbols, symbolOf } from "../symbols.ts";
 import type { Citations } from "./citations.ts";
+import { howItWasFitted } from "./methods-of-fitting.ts";
 import { sentence } from "./table.ts";
 
 /** What the methods paragraph is written from. */
@@ -49,11 +50,15 @@ export function methods({ document, notation, symbols, citations, modelReference
     text.push(
       `Local-mode notation, the same algebra: for two terms ν̃(0 → v) = v ω̃ − v(v + 1) ω̃x ${cite("henry1977")}.`,
     );
-  text.push(...fitting(series, request, cite));
+  text.push(...howItWasFitted(series, request, cite));
   if (row("morse")) text.push(`Morse relation: De = ${first}²/(4${second}), D0 = De − G(0) ${cite("morse1929")}.`);
   if (row("spacing-sum"))
     text.push(
       `Spacing sum: the highest observed level and a straight-line remainder of the spacings beyond it ${cite("birge1926")}.`,
+    );
+  if (any(({ dissociation }) => dissociation.some((r) => r.empirical != null)))
+    text.push(
+      "Empirical ranges: the same number of terms fitted to known wells at the same covered fraction; the spread of the error of their extrapolated part (docs/empirical-error.md of the package).",
     );
   if (row("turning-point")) text.push("Turning point: G(v) where dG/dv = 0 past the highest observed level.");
   if (row("near-limit")) text.push(`Near the limit: the long-range form of ${cite("lerouybernstein1970")}.`);
@@ -83,35 +88,3 @@ export function methods({ document, notation, symbols, citations, modelReference
 
 /** Square brackets of citations are ours and need no verbatim. */
 const unescapeCitations = (text: string) => text.replace(/\\\[([\d, ]+)\\\]/gu, "[$1]");
-
-function fitting(series: readonly SeriesResult[], request: FitDocument["request"], cite: Citations["cite"]): string[] {
-  const any = (test: (one: SeriesResult) => boolean) => series.some(test);
-  const text: string[] = [];
-  const weighted = any(({ quality }) => quality.chiSquare !== null);
-  text.push(
-    weighted
-      ? `The positions themselves are fitted by generalised least squares with the inverse covariance of the stated uncertainties as weights ${cite("aitken1936")}, by Householder QR on scaled columns ${cite("golub1965")}.`
-      : `The positions themselves are fitted by least squares with equal weights, by Householder QR on scaled columns ${cite("golub1965")}; uncertainties come from the residual variance.`,
-  );
-  if (request["shared-sigma"] !== undefined)
-    text.push("An offset common to all bands enters the covariance as fully correlated.");
-  if (request.spacings === "subtracted")
-    text.push(
-      "Spacings were subtracted from measured positions, so neighbours share errors: the covariance is tridiagonal.",
-    );
-  if (any(({ quality }) => quality.excess.applied && quality.excess.kind === "scatter"))
-    text.push(
-      request.scatter === undefined
-        ? `Where χ² is improbable at 5 %, a scatter τ common to all bands is added in quadrature so that χ² equals the degrees of freedom ${cite("mandel1970")}.`
-        : "A scatter τ common to all bands is added in quadrature, as given.",
-    );
-  if (any(({ quality }) => quality.excess.applied && quality.excess.kind === "birge"))
-    text.push(
-      `Where χ² is improbable at 5 %, the stated uncertainties are multiplied by the Birge factor √(χ²/ν) ${cite("birge1932")}.`,
-    );
-  if (any(({ covariance }) => covariance !== null))
-    text.push(`Uncertainties are propagated to first order with the full covariance ${cite("jcgm100")}.`);
-  if (any(({ bands }) => bands.some((band) => band.studentizedResidual !== null)))
-    text.push(`Residuals are externally studentised ${cite("cook1982")}.`);
-  return text;
-}

@@ -22,7 +22,7 @@ export interface Sample {
 }
 
 const KEYS = ["we", "wexe", "weye"] as const;
-/** h/(8π²c u) in u Å² cm-1, CODATA 2022, as tabulated in the project's notes on physics. */
+/** h/(8π²c u) in u Å² cm-1, CODATA 2022. */
 const KAPPA = 16.85762916809;
 
 /** Overtones 1-0 to `count`-0. */
