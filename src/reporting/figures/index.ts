@@ -1,5 +1,3 @@
-export type { FigureSpec } from "./figure-spec.ts";
 export { figuresFor } from "./figures-for.ts";
-export { type FigureAssets, shippedFonts } from "./font-files.ts";
-export type { FigureOptions } from "./options.ts";
+export type { FigureAssets } from "./font-files.ts";
 export { renderFigures } from "./render-figures.ts";

@@ -1,6 +1,3 @@
-import type { Run } from "./figure-spec.ts";
-import { SIZE } from "./style.ts";
-
 /** Advance widths in thousandths of the text size, of a sans serif with the usual metrics; characters of one width together. */
 const WIDTHS: readonly (readonly [number, string])[] = [
   [0, "\u0303\u0302\u0301\u0300\u0308"],
@@ -35,11 +32,6 @@ export function textWidth(text: string, sizePt: number): number {
   let total = 0;
   for (const character of text) total += widthOf(character);
   return (total * sizePt) / 1000;
-}
-
-/** Width of runs in pt. */
-export function runsWidth(runs: readonly Run[], sizePt: number): number {
-  return runs.reduce((sum, { text, script }) => sum + textWidth(text, script ? SIZE.script : sizePt), 0);
 }
 
 /** The text itself, or its beginning and end around an ellipsis, no wider than `widthPt`. */

@@ -74,11 +74,6 @@ export function axis(label: readonly Run[], min: number, max: number, wanted: nu
   return { label, min, max, ticks: values, decimals };
 }
 
-/** The same axis with ticks but no text, for a panel above another that shares it. */
-export function unlabelled(shared: Axis): Axis {
-  return { ...shared, label: [], tickLabels: shared.ticks.map(() => "") };
-}
-
 /** The text of every tick of an axis. */
 export function tickTexts({ ticks, decimals, tickLabels }: Axis): readonly string[] {
   return tickLabels ?? ticks.map((value) => tickText(value, decimals));
