@@ -37,7 +37,7 @@ const ROUNDINGS = 256;
 export function fitLinear(problem: Problem, treatment: Treatment = UNTREATED): LinearFit {
   const { parameters, observed, errors } = problem;
   const { jacobian } = problem.evaluate(parameters.map(() => 0));
-  const free = parameters.flatMap((p, k) => (p.held === undefined ? [k] : []));
+  const free = freeOf(parameters);
   const priors = free.filter((k) => parameters[k]!.prior !== undefined);
   const white = whitening(errors, treatment, observed.length);
   const sigmaKnown = errors.sigmas !== null;
@@ -84,12 +84,19 @@ export function fitLinear(problem: Problem, treatment: Treatment = UNTREATED): L
   };
 }
 
+/** Places of the constants that are not held. */
+function freeOf(parameters: Problem["parameters"]): number[] {
+  const free: number[] = [];
+  for (let k = 0; k < parameters.length; k++) if (parameters[k]!.held === undefined) free.push(k);
+  return free;
+}
+
 /** The constants alone, without uncertainties and tests: for many small fits. Priors count as with σ known. Throws as fitLinear. */
 export function fitValues(problem: Problem, treatment: Treatment): number[] {
   const { parameters, observed, errors } = problem;
   const values = parameters.map((p) => p.held ?? 0);
   const { jacobian } = problem.evaluate(values);
-  const free = parameters.flatMap((p, k) => (p.held === undefined ? [k] : []));
+  const free = freeOf(parameters);
   const priors = free.filter((k) => parameters[k]!.prior !== undefined);
   const white = whitening(errors, treatment, observed.length);
   const { solution } = solveWhitened(problem, jacobian, free, priors, white, 1);

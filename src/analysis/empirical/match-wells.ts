@@ -34,17 +34,21 @@ export function matchWells(
 ): Match {
   let covered = top / (top + beyond);
   let ofClass = kind !== null;
-  const dropped = new Set<ReferenceWell>();
-  let before = new Set<ReferenceWell>();
+  // One state a well: 0 not reached in the last round, 1 reached, 2 dropped out for good. This runs in every fit.
+  const state = new Uint8Array(wells.length);
   for (let round = 1; ; round++) {
     const all: number[] = [];
     const alike: number[] = [];
-    const now = new Set<ReferenceWell>();
-    for (const well of wells) {
-      const ratio = ratioAt(well.fits[terms] ?? [], covered);
-      if (ratio === null && before.has(well)) dropped.add(well);
-      if (ratio === null || dropped.has(well)) continue;
-      now.add(well);
+    for (let i = 0; i < wells.length; i++) {
+      if (state[i] === 2) continue;
+      const well = wells[i]!;
+      const fits = well.fits[terms];
+      const ratio = fits === undefined ? null : ratioAt(fits, covered);
+      if (ratio === null) {
+        if (state[i] === 1) state[i] = 2;
+        continue;
+      }
+      state[i] = 1;
       all.push(ratio);
       if (well.class === kind) alike.push(ratio);
     }
@@ -54,6 +58,5 @@ export function matchWells(
     const next = top / (top + (beyond / low + beyond / high) / 2);
     if (Math.abs(next - covered) < SETTLED || round === ROUNDS) return { covered, all, alike: ofClass ? alike : null };
     covered = (covered + next) / 2;
-    before = now;
   }
 }
