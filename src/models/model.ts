@@ -2,6 +2,7 @@ import type { Series } from "../bands/index.ts";
 import type { Prepared } from "../fitting/index.ts";
 import type { Fault } from "../messages/index.ts";
 import type { Bond } from "../species/index.ts";
+import type { Manifold } from "./manifold.ts";
 
 export type Notation = "equilibrium" | "local";
 
@@ -94,4 +95,6 @@ export interface Model {
   /** first values of all constants, of a model that is not linear in them; null where the bands do not lead to any */
   starts?(transitions: readonly Transition[], observed: readonly number[], options: ModelOptions): number[] | null;
   readonly limit?: Limit;
+  /** of models whose states mix in blocks: levels and what follows from them */
+  manifold?(options: ModelOptions): Manifold;
 }

@@ -1,0 +1,41 @@
+/** A basis state and its part in a level; weights of one level add to 1. */
+interface Part {
+  readonly state: string;
+  readonly weight: number;
+}
+
+/** A level of a model whose states mix, cm-1 above the ground state; a degenerate level stands once. */
+interface MixedLevel {
+  readonly label: string;
+  /** what stays good while states mix: total quanta V and species, or polyad number N, l and j; keys as in the JSON document */
+  readonly numbers: Readonly<Record<string, number | string>>;
+  readonly degeneracy: number;
+  readonly energy: number;
+  /** dE/dp by the constants, in their order (Hellmann–Feynman) */
+  readonly gradient: readonly number[];
+  /** the share that `Manifold.share` names */
+  readonly share: number;
+  /** largest part first */
+  readonly composition: readonly Part[];
+}
+
+/** A number that follows from the constants, such as a splitting or a constant in other conventions. */
+interface Consequence {
+  readonly key: string;
+  readonly symbol: string;
+  readonly unit: string;
+  /** null where it does not exist */
+  of(p: readonly number[]): number | null;
+  readonly note: string | null;
+}
+
+/** What a model with blocks of mixed states can tell beyond its constants. */
+export interface Manifold {
+  /** the key in `MixedLevel.numbers` of the number that blocks keep */
+  readonly block: "V" | "N";
+  /** what `share` is: its key in JSON and its head in tables */
+  readonly share: { readonly key: "weight" | "stretchShare"; readonly title: string };
+  /** all levels with block numbers up to this, by block and then from below */
+  levels(p: readonly number[], upTo: number): MixedLevel[];
+  consequences(upTo: number): Consequence[];
+}
