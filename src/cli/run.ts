@@ -1,12 +1,15 @@
 import { EXIT, formatFault, InputError } from "../messages/index.ts";
 import { colourise, wantsColour } from "./colour.ts";
 import type { Console } from "./job.ts";
+import { openOutput } from "./output.ts";
 import { parse } from "./program.ts";
 
 /** Run one command line; every outcome ends as an exit code. */
 export async function run(words: readonly string[]): Promise<number> {
-  const out = (text: string) => void process.stdout.write(text);
-  const err = (text: string) => void process.stderr.write(text);
+  const output = openOutput(1);
+  const errors = openOutput(2);
+  const { write: out } = output;
+  const { write: err } = errors;
   const debug = words.includes("--debug");
   try {
     if (words.length === 0) return await usage(out, err);
@@ -16,19 +19,16 @@ export async function run(words: readonly string[]): Promise<number> {
     const plain = options["no-color"] === true;
     const console: Console = {
       out,
-      settled: () =>
-        process.stdout.writableNeedDrain
-          ? new Promise((resolve) => process.stdout.once("drain", () => resolve()))
-          : Promise.resolve(),
+      settled: output.settled,
       err,
-      colourOut: !plain && wantsColour(process.stdout),
-      colourErr: !plain && wantsColour(process.stderr),
+      colourOut: !plain && wantsColour(output),
+      colourErr: !plain && wantsColour(errors),
       quiet: options.quiet === true,
     };
     const job = await chosen.entry.load();
     return await job(chosen.asked, console);
   } catch (error) {
-    return report(error, err, debug, !words.includes("--no-color") && wantsColour(process.stderr));
+    return report(error, err, debug, !words.includes("--no-color") && wantsColour(errors));
   }
 }
 

@@ -103,6 +103,7 @@ const spanOf = (columns: readonly SetColumn[], gap: number) => columns.reduce((s
 /** All columns side by side, or in as few blocks as fit, of about equal width, each with the first column before it. */
 function blocksOf(columns: readonly SetColumn[], room: number, gap: number): readonly (readonly SetColumn[])[] {
   const blocks = filled(columns, room, gap);
+  if (blocks.length < 2) return blocks;
   for (let less = room - 1; less > 0; less--) {
     const narrower = filled(columns, less, gap);
     if (narrower.length > blocks.length || narrower.some((block) => spanOf(block, gap) > less))
@@ -114,10 +115,17 @@ function blocksOf(columns: readonly SetColumn[], room: number, gap: number): rea
 function filled([first, ...others]: readonly SetColumn[], room: number, gap: number): SetColumn[][] {
   if (first === undefined) return [];
   const blocks: SetColumn[][] = [[first]];
+  let span = first.width;
   for (const column of others) {
     const last = blocks.at(-1)!;
-    if (last.length === 1 || spanOf([...last, column], gap) <= room) last.push(column);
-    else blocks.push([first, column]);
+    const wider = span + gap + column.width;
+    if (last.length === 1 || wider <= room) {
+      last.push(column);
+      span = wider;
+    } else {
+      blocks.push([first, column]);
+      span = first.width + gap + column.width;
+    }
   }
   return blocks;
 }
