@@ -1,0 +1,77 @@
+import { readdirSync, readFileSync } from "node:fs";
+import { Ajv2020 } from "ajv/dist/2020.js";
+import { describe, expect, it } from "vitest";
+import { check, convert, fit, predict, report } from "../../src/index.ts";
+
+/** Every schema of docs/schema, strict: an unknown keyword or a reference that leads nowhere is an error. */
+function schemas() {
+  const ajv = new Ajv2020({ strict: true, allowUnionTypes: true, allErrors: true });
+  for (const name of readdirSync("docs/schema"))
+    ajv.addSchema(JSON.parse(readFileSync(`docs/schema/${name}`, "utf8")), name);
+  return ajv;
+}
+
+/** What a schema finds wrong with a document as it is printed. */
+function faults(name: string, document: object): string[] {
+  const validate = schemas().getSchema(`${name}.schema.json`)!;
+  validate(JSON.parse(JSON.stringify(document)));
+  return (validate.errors ?? []).map(({ instancePath, message, params }) =>
+    [instancePath, message, JSON.stringify(params)].join(" "),
+  );
+}
+
+const hcl = { bands: "1-0 2885.98(2), 2-0 5667.98(2), 3-0 8346.78(5), 2-1 2782.0(5)", bond: "1H 35Cl" } as const;
+const file = (name: string) => ({
+  text: readFileSync(`datasets/${name}`, "utf8"),
+  source: name,
+  format: name.endsWith("toml") ? ("toml" as const) : ("csv" as const),
+});
+
+describe("the schemas describe every key of the documents, and no document has another", () => {
+  it.each([
+    ["flags", hcl],
+    ["one band short of uncertainties", { series: "2885.98 5667.98", terms: 2 }],
+    [
+      "profiles, another coverage, an accepted value",
+      { ...hcl, intervals: "profile", coverage: 0.9, accepted: "35759(5)" },
+    ],
+    ["draws", { ...hcl, intervals: "resample", resamples: 200, terms: 3 }],
+    ["a robust fit", { ...hcl, robust: "tukey" }],
+    ["a file of two bonds with excluded bands", { input: file("demo/bonds-a-and-b.csv") }],
+    ["levels refused as not near the limit", { input: file("h2.csv"), model: "near-limit", power: 6 }],
+  ])("fit: %s", async (_, request) => {
+    expect(faults("fit", await fit(request))).toEqual([]);
+  });
+
+  it("predict", async () => {
+    expect(faults("predict", await predict({ ...hcl, hot: 1 }))).toEqual([]);
+    expect(faults("predict", await predict({ constants: "we=2990.95(1) wexe=52.82(1)" }))).toEqual([]);
+  });
+
+  it("convert", () => {
+    expect(
+      faults("convert", convert({ values: ["1197.7", "745.286(10)"], unit: "nm", medium: "air", to: "cm-1" })),
+    ).toEqual([]);
+  });
+
+  it("check, with and without differences", async () => {
+    const { files } = await report(hcl);
+    const of = (name: string) => String(files.find((one) => one.name === name)!.content);
+    const input = { text: of("input.toml"), source: "input.toml", format: "toml" as const };
+    const stored = { text: of("result.json"), source: "result.json" };
+    const same = await check({ stored, input });
+    expect(same.ok).toBe(true);
+    expect(faults("check", same)).toEqual([]);
+    const altered = await check({
+      stored: { ...stored, text: stored.text.replace(/"value": 2/, '"value": 3') },
+      input,
+    });
+    expect(altered.ok).toBe(false);
+    expect(faults("check", altered)).toEqual([]);
+  });
+
+  it("finds a key that is not described", async () => {
+    const document = await fit(hcl);
+    expect(faults("fit", { ...document, surprise: 1 })).toHaveLength(1);
+  });
+});
