@@ -73,6 +73,8 @@ export function residualsFigure(series: readonly SeriesResult[], options: Figure
   );
 }
 
+type Levels = NonNullable<ReturnType<typeof levelsOf>>;
+
 interface Residual extends Point {
   readonly used: boolean;
   readonly flagged: boolean;
@@ -81,16 +83,25 @@ interface Residual extends Point {
 
 function pointsOf({ bands, warnings }: SeriesResult, shift: number): Residual[] {
   const named = new Set(warnings.filter(({ code }) => code === "band-stands-out").map(({ about }) => about));
+  const all = bands.flatMap(({ label }) => levelsOf(label) ?? []);
   return bands.flatMap(({ label, observed, residual, standardUncertainty: u, used }) => {
     const levels = levelsOf(label);
     if (levels === null || residual === null) return [];
-    // Hot bands stand a little to the right of the overtone with the same upper level.
-    const x = levels.upper + shift + (levels.lower > 0 ? 0.25 : 0);
+    const x = levels.upper + shift + aside(levels, all);
     const flagged = used && named.has(label);
     // A fit through every band leaves rounding, which is no residual.
     const y = Math.abs(residual) < 1e-10 * observed ? 0 : residual;
     return [{ x, y, used, flagged, label, ...(u === null ? {} : { yError: u }) }];
   });
+}
+
+/** Hot bands stand to the right of the overtone with the same upper level, those from higher levels further. */
+function aside({ upper, lower }: Levels, all: readonly Levels[]): number {
+  if (lower === 0) return 0;
+  const lowers = [
+    ...new Set(all.filter((other) => other.upper === upper && other.lower > 0).map((other) => other.lower)),
+  ];
+  return (0.5 * (lowers.filter((other) => other < lower).length + 1)) / (lowers.length + 1);
 }
 
 function tracesOf(points: readonly Residual[], index: number, name: string | null): Trace[] {

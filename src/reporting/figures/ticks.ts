@@ -79,6 +79,9 @@ export function tickTexts({ ticks, decimals, tickLabels }: Axis): readonly strin
   return tickLabels ?? ticks.map((value) => tickText(value, decimals));
 }
 
+/** With so many round numbers on an axis, 810 or 1300 between them would only disturb. */
+const ENOUGH = 4;
+
 /**
  * Places for a second axis that is no linear function of the first: rounder numbers first (1, 2, 5, then whole multiples of
  * powers of ten, and so on), each where it keeps `apart` from those already set. `place` maps a number to its place.
@@ -109,7 +112,8 @@ export function scatteredTicks(
     tiers.push(tier);
   }
   const chosen: number[] = [];
-  for (const tier of tiers) {
+  for (const [i, tier] of tiers.entries()) {
+    if (i > 2 && chosen.length >= ENOUGH) break;
     for (const value of tier) {
       if (value < low || value > high) continue;
       if (chosen.every((other) => Math.abs(place(other) - place(value)) >= apart)) chosen.push(value);
