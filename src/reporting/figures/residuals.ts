@@ -42,7 +42,10 @@ export function residualsFigure(series: readonly SeriesResult[], options: Figure
     },
     ...drawn.flatMap((some, i) => tracesOf(some, i, series.length > 1 ? names[i]! : null)),
   ];
-  const [low, high] = paddedRange(reach, 0.14);
+  const [bottom, high] = paddedRange(reach, 0.14);
+  // A legend takes its room from above and squeezes the rest; a name under a bar needs its height all the same.
+  const named = series.length > 1 && points.some(({ flagged, y }) => flagged && y < 0);
+  const low = named ? bottom - 0.2 * (high - bottom) : bottom;
   return compose(
     {
       name: "residuals",
