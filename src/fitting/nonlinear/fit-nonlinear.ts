@@ -72,12 +72,13 @@ export function fitNonlinear(request: NonlinearRequest): NonlinearResult {
     });
     return p;
   };
+  if (!y.every(Number.isFinite)) throw new RangeError("the data must be finite numbers");
   if (y.length < free.length) throw new RangeError(`${y.length} data cannot determine ${free.length} constants`);
   const problem = objective(
     y,
     whiteningOf(request),
     (q) => request.model(whole(q)),
-    (q) => request.jacobian(whole(q)).map((row) => free.map((k) => row[k]!)),
+    (q) => request.jacobian(whole(q)).map((row) => columnsOf(row, free, start.length)),
     free.length,
   );
   const known = request.sigma !== undefined || request.covariance !== undefined;
@@ -88,6 +89,12 @@ export function fitNonlinear(request: NonlinearRequest): NonlinearResult {
     request.typical ?? start,
   );
   return finish(request, problem, descent, reason, whole, free, known);
+}
+
+function columnsOf(row: readonly number[], free: readonly number[], constants: number): number[] {
+  if (row.length !== constants)
+    throw new RangeError(`a row of the jacobian has ${row.length} entries for ${constants} constants`);
+  return free.map((k) => row[k]!);
 }
 
 function whiteningOf({ y, sigma, covariance }: NonlinearRequest): Whitening {
