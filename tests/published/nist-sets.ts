@@ -148,4 +148,71 @@ export const nistSets: readonly NistSet[] = [
       return [e, (a! * e) / (x + c!), (-a! * e * b!) / (x + c!) ** 2];
     },
   },
+  {
+    name: "Rat43",
+    status: "from memory",
+    x: Array.from({ length: 15 }, (_, i) => i + 1),
+    y: [
+      16.08, 33.83, 65.8, 97.2, 191.55, 326.2, 386.87, 520.53, 590.03, 651.92, 724.93, 699.56, 689.96, 637.56, 717.41,
+    ],
+    starts: [
+      [100, 10, 1, 1],
+      [700, 5, 0.75, 1.3],
+    ],
+    certified: [6.996415127e2, 5.2771253025, 7.5962938329e-1, 1.2792483859],
+    deviations: null,
+    residualSumOfSquares: 8.786404908e3,
+    model: ([a, b, c, d], x) => a! / (1 + Math.exp(b! - c! * x)) ** (1 / d!),
+    derivatives: ([a, b, c, d], x) => {
+      const e = Math.exp(b! - c! * x);
+      const f = a! / (1 + e) ** (1 / d!);
+      const slope = (-f * e) / (d! * (1 + e));
+      return [f / a!, slope, -x * slope, (f * Math.log1p(e)) / d! ** 2];
+    },
+  },
+  {
+    name: "MGH17",
+    status: "from memory",
+    x: Array.from({ length: 33 }, (_, i) => 10 * i),
+    y: [
+      0.844, 0.908, 0.932, 0.936, 0.925, 0.908, 0.881, 0.85, 0.818, 0.784, 0.751, 0.718, 0.685, 0.658, 0.628, 0.603,
+      0.58, 0.558, 0.538, 0.522, 0.506, 0.49, 0.478, 0.467, 0.457, 0.448, 0.438, 0.431, 0.424, 0.42, 0.414, 0.411,
+      0.406,
+    ],
+    starts: [
+      [50, 150, -100, 1, 2],
+      [0.5, 1.5, -1, 0.01, 0.02],
+    ],
+    certified: [3.7541005211e-1, 1.9358469127, -1.4646871366, 1.286753464e-2, 2.2122699662e-2],
+    deviations: null,
+    residualSumOfSquares: 5.4648946975e-5,
+    model: ([a, b, c, d, e], x) => a! + b! * Math.exp(-x * d!) + c! * Math.exp(-x * e!),
+    derivatives: ([, b, c, d, e], x) => {
+      const [first, second] = [Math.exp(-x * d!), Math.exp(-x * e!)];
+      return [1, first, second, -x * b! * first, -x * c! * second];
+    },
+  },
+  {
+    name: "Lanczos2",
+    status: "from memory",
+    // the three exponentials of the description, rounded to six digits as the data are
+    x: Array.from({ length: 24 }, (_, i) => 0.05 * i),
+    y: Array.from({ length: 24 }, (_, i) =>
+      Number(
+        (0.0951 * Math.exp(-0.05 * i) + 0.8607 * Math.exp(-0.15 * i) + 1.5576 * Math.exp(-0.25 * i)).toPrecision(6),
+      ),
+    ),
+    starts: [
+      [1.2, 0.3, 5.6, 5.5, 6.5, 7.6],
+      [0.5, 0.7, 3.6, 4.2, 4, 6.3],
+    ],
+    certified: [9.6251029939e-2, 1.0057332849, 8.6424689056e-1, 3.0078283915, 1.5529016879, 5.00287981],
+    deviations: null,
+    residualSumOfSquares: 2.2299428125e-11,
+    model: ([a, b, c, d, e, f], x) => a! * Math.exp(-b! * x) + c! * Math.exp(-d! * x) + e! * Math.exp(-f! * x),
+    derivatives: ([a, b, c, d, e, f], x) => {
+      const [first, second, third] = [Math.exp(-b! * x), Math.exp(-d! * x), Math.exp(-f! * x)];
+      return [first, -x * a! * first, second, -x * c! * second, third, -x * e! * third];
+    },
+  },
 ];
