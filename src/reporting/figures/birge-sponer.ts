@@ -18,8 +18,9 @@ interface Drawn {
   readonly name: string;
   readonly points: readonly (Point & { readonly filled: boolean })[];
   readonly line: ((x: number) => Valued) | null;
-  /** abscissae: start of the line, end of what was observed, end of the extrapolation */
+  /** abscissae: left end of the frame, start of the line, end of what was observed, end of the extrapolation */
   readonly from: number;
+  readonly start: number;
   readonly observed: number;
   readonly to: number;
   readonly reachesZero: boolean;
@@ -31,7 +32,8 @@ interface Drawn {
  */
 export function birgeSponerFigure(series: readonly SeriesResult[], options: FigureOptions): FigureSpec | null {
   const overtones = series.map((one) => positionPlot(one));
-  const local = options.notation === "local" && overtones.some(({ points }) => points.length > 0);
+  const wells = series.some((one) => fittedWell(one) !== null);
+  const local = wells && options.notation === "local" && overtones.some(({ points }) => points.length > 0);
   const drawn = local ? overtones : series.map((one) => spacingPlot(one));
   const points = drawn.flatMap((one) => one.points);
   if (points.length === 0) return null;
@@ -48,6 +50,7 @@ export function birgeSponerFigure(series: readonly SeriesResult[], options: Figu
   ];
   const padded = paddedRange(heights);
   const right = Math.max(...drawn.map(({ to, observed }) => Math.max(to, observed)));
+  const left = Math.min(...drawn.map(({ from }) => from));
   const y = local ? SYMBOL.wavenumberOverLevel : SYMBOL.spacing;
   const unshown = points.some(({ filled }) => !filled);
   return compose(
@@ -62,7 +65,11 @@ export function birgeSponerFigure(series: readonly SeriesResult[], options: Figu
       {
         tag: null,
         weight: 1,
-        x: { label: local ? SYMBOL.level : SYMBOL.levelPlusHalf, range: [0, right * 1.03 + 0.2], least: 1 },
+        x: {
+          label: local ? SYMBOL.level : SYMBOL.levelPlusHalf,
+          range: [left, right + 0.03 * (right - left) + 0.2],
+          least: 1,
+        },
         y: { label: quotient(y, UNIT.wavenumber), range: zero ? [0, padded[1]] : padded },
         traces,
         texts: [],
@@ -73,17 +80,57 @@ export function birgeSponerFigure(series: readonly SeriesResult[], options: Figu
 }
 
 function spacingPlot(series: SeriesResult): Drawn {
-  const points = observedSpacings(series.bands).map(({ lower, upper, mean, standardUncertainty: u }) => ({
+  const well = fittedWell(series);
+  // A law that holds close under the limit says nothing of the way from v = 0 up to its lowest level.
+  const shown = observedSpacings(series.bands).filter(({ lower, upper }) => well !== null || lower > 0 || upper === 1);
+  const points = shown.map(({ lower, upper, mean, standardUncertainty: u }) => ({
     x: (lower + upper) / 2,
     y: mean,
     filled: upper - lower === 1,
     ...(u === null ? {} : { yError: u }),
   }));
-  const well = fittedWell(series);
-  const line = well === null ? null : (x: number) => well.difference(x + 0.5, x - 0.5);
   const observed = Math.max(0.5, ...points.map(({ x }) => x));
-  const end = line === null ? { to: observed, reachesZero: false } : zeroOf((x) => line(x).value, observed);
-  return { name: series.name, points, line, from: 0, observed, ...end };
+  const { name } = series;
+  if (well === null) {
+    const spacings = fittedSpacings(series);
+    const [first, last] = [spacings[0], spacings.at(-1)];
+    const line = first === undefined ? null : (x: number) => ({ value: between(spacings, x), half: null });
+    const lowest = Math.min(first?.x ?? observed, ...points.map(({ x }) => x));
+    const from = lowest > 3 ? lowest - 0.5 : 0;
+    return { name, points, line, from, start: first?.x ?? from, observed, to: last?.x ?? observed, reachesZero: false };
+  }
+  const line = (x: number) => well.difference(x + 0.5, x - 0.5);
+  return { name, points, line, from: 0, start: 0, observed, ...zeroOf((x) => line(x).value, observed) };
+}
+
+interface At {
+  readonly x: number;
+  readonly value: number;
+}
+
+/** Spacings of neighbouring levels as the model gives them, for models without a well: from calculated and predicted v-0 bands. */
+function fittedSpacings({ bands, predictions }: SeriesResult): At[] {
+  const energies = new Map<number, number>();
+  const add = (label: string, energy: number | null) => {
+    const levels = levelsOf(label);
+    if (levels?.lower === 0 && energy !== null) energies.set(levels.upper, energy);
+  };
+  for (const { label, position } of predictions) add(label, position.value);
+  for (const { label, calculated } of bands) add(label, calculated);
+  return [...energies]
+    .filter(([v]) => energies.has(v + 1))
+    .map(([v, energy]) => ({ x: v + 0.5, value: energies.get(v + 1)! - energy }))
+    .sort((a, b) => a.x - b.x);
+}
+
+/** Straight between neighbouring points. */
+function between(points: readonly At[], x: number): number {
+  const after = Math.max(
+    1,
+    points.findIndex((point) => point.x >= x),
+  );
+  const [low, high] = [points[after - 1]!, points[after] ?? points.at(-1)!];
+  return high.x === low.x ? low.value : low.value + ((high.value - low.value) * (x - low.x)) / (high.x - low.x);
 }
 
 /** Where the line falls to zero past what was observed; otherwise where it stops falling, or a little further on. */
@@ -111,18 +158,18 @@ function positionPlot(series: SeriesResult): Drawn {
   const well = fittedWell(series);
   const line = well === null ? null : (x: number) => (x < 1e-6 ? well.slope(0) : well.difference(x, 0, x));
   const observed = Math.max(1, ...points.map(({ x }) => x));
-  return { name: series.name, points, line, from: 0, observed, to: observed + 1, reachesZero: false };
+  return { name: series.name, points, line, from: 0, start: 0, observed, to: observed + 1, reachesZero: false };
 }
 
 const STEPS = 120;
 
-function tracesOf({ points, line, from, observed, to }: Drawn, index: number, label: string | null): Trace[] {
+function tracesOf({ points, line, start, observed, to }: Drawn, index: number, label: string | null): Trace[] {
   const { colour, marker, dashPt } = seriesStyle(index);
   const traces: Trace[] = [];
   if (line !== null) {
-    const sampled = (start: number, end: number) =>
-      Array.from({ length: STEPS + 1 }, (_, i) => start + ((end - start) * i) / STEPS).map((x) => ({ x, ...line(x) }));
-    const fitted = sampled(from, observed);
+    const sampled = (first: number, end: number) =>
+      Array.from({ length: STEPS + 1 }, (_, i) => first + ((end - first) * i) / STEPS).map((x) => ({ x, ...line(x) }));
+    const fitted = sampled(start, observed);
     const beyond = to > observed ? sampled(observed, to) : [];
     const band = [...fitted, ...beyond].flatMap(({ x, value, half }) =>
       half === null ? [] : [{ x, low: value - half, high: value + half }],
@@ -153,7 +200,9 @@ function caption(series: readonly SeriesResult[], options: FigureOptions, local:
     ? "bars: standard uncertainties, propagated from those of the bands"
     : "no uncertainties were stated";
   const other = local ? "hollow: bands not used in the fit" : "hollow: mean spacing over levels that were not observed";
-  const band = series.some(({ covariance }) => covariance !== null) ? "; shaded: its 95 % confidence band" : "";
+  const band = series.some((one) => one.covariance !== null && fittedWell(one) !== null)
+    ? "; shaded: its 95 % confidence band"
+    : "";
   return [
     `${what}, for ${seriesPhrase(series)}.`,
     `Points: observed${hollow ? ` (${other})` : ""}; ${bars}.`,

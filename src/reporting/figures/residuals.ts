@@ -26,6 +26,8 @@ export function residualsFigure(series: readonly SeriesResult[], options: Figure
     90,
     SIZE.small,
   );
+  const lowest = Math.min(...points.map(({ x }) => x));
+  const left = lowest > 3 ? lowest - 0.6 : 0.4;
   const right = Math.max(...points.map(({ x }) => x)) + 0.6;
   const reach = points.flatMap(({ y, yError = 0 }) => [y - yError, y + yError, 0]);
   const traces: Trace[] = [
@@ -36,7 +38,7 @@ export function residualsFigure(series: readonly SeriesResult[], options: Figure
       widthPt: SIZE.thin,
       dashPt: [],
       points: [
-        { x: 0.4, y: 0 },
+        { x: left, y: 0 },
         { x: right, y: 0 },
       ],
     },
@@ -58,7 +60,7 @@ export function residualsFigure(series: readonly SeriesResult[], options: Figure
       {
         tag: null,
         weight: 1,
-        x: { label: SYMBOL.upperLevel, range: [0.4, right], least: 1 },
+        x: { label: SYMBOL.upperLevel, range: [left, right], least: 1 },
         y: { label: quotient(SYMBOL.observedMinusCalculated, UNIT.wavenumber), range: [low, high] },
         traces,
         texts: points
