@@ -4,11 +4,13 @@ import type { Warning } from "../messages/index.ts";
 import type { Model, Well } from "../models/index.ts";
 import { acceptedD0 } from "./accepted.ts";
 import { chooseTerms } from "./choice-of-terms.ts";
+import { commonErrors } from "./common-errors.ts";
 import { derivedNumbers, highestLevel } from "./derived.ts";
 import { dissociationRows } from "./dissociation/rows.ts";
 import { withEmpirical } from "./empirical/with-empirical.ts";
 import { fitWarnings } from "./fit-warnings.ts";
 import { refineIntervals } from "./intervals.ts";
+import { withMixture } from "./mixture.ts";
 import { followLimit } from "./near-limit/follow-limit.ts";
 import type { AnalysisOptions } from "./options.ts";
 import { predict } from "./predictions.ts";
@@ -25,7 +27,8 @@ const LEVELS_BEYOND = 3;
  * Fit one series and derive everything that follows. Pure; units as in SeriesResult.
  * Throws InputError with exit 3 when the bands do not determine the constants.
  */
-export function analyse(series: Series, model: Model, given: AnalysisOptions): SeriesResult {
+export function analyse(measured: Series, model: Model, given: AnalysisOptions): SeriesResult {
+  const { series, warnings: aboutMixture } = withMixture(measured, model, given);
   const reducedMass = series.bond?.reducedMass ?? null;
   const asked = model.limit === undefined ? given : { ...given, reducedMass };
   const choice = wantsChoice(series, model, asked) ? chooseTerms(series, model, asked) : null;
@@ -37,6 +40,7 @@ export function analyse(series: Series, model: Model, given: AnalysisOptions): S
   const free = solution.stated.keys.flatMap((key, k) => (options.fixed[key]?.sigma === null ? [] : [k]));
   const { first, warnings, ...follows } = whatFollows(solution);
   const known = acceptedD0(solution);
+  const common = commonErrors(solution);
   return refineIntervals(solution, {
     name: series.name,
     model: model.name,
@@ -58,6 +62,7 @@ export function analyse(series: Series, model: Model, given: AnalysisOptions): S
     ...follows,
     accepted: known.accepted,
     comparison: choice?.comparison ?? null,
+    commonErrors: common.errors,
     intervals: null,
     fitReport: {
       method: `${linear ? LINEAR_METHOD : NONLINEAR_METHOD}${options.robust === null ? "" : `, robust weights (${options.robust})`}`,
@@ -68,6 +73,8 @@ export function analyse(series: Series, model: Model, given: AnalysisOptions): S
     warnings: [
       ...first,
       ...series.warnings,
+      ...aboutMixture,
+      ...common.warnings,
       ...(choice?.warnings ?? []),
       // Where the law itself is refused, no single band is to blame.
       ...fitWarnings(solution, choice !== null).filter(({ code }) => first.length === 0 || code !== "band-stands-out"),

@@ -1,4 +1,4 @@
-import type { Band, Series } from "../bands/index.ts";
+import type { Band, Series, Shared } from "../bands/index.ts";
 import type { ErrorModel } from "../fitting/index.ts";
 import type { Model } from "../models/index.ts";
 
@@ -10,8 +10,9 @@ import type { Model } from "../models/index.ts";
 export function errorModel(series: Series, used: readonly Band[], model: Model): ErrorModel {
   const known = used.every((band) => band.sigma !== null);
   const own = known ? used.map((band) => band.sigma!) : null;
-  const offsets = series.shared === null ? null : used.map((band) => series.shared![series.bands.indexOf(band)]!);
-  if (!series.subtracted) return { sigmas: own, mixing: null, shared: offsets === null ? [] : [offsets] };
+  const places = series.shared.length === 0 ? [] : used.map((band) => series.bands.indexOf(band));
+  const causes = series.shared.map(({ parts }) => places.map((at) => parts[at]!));
+  if (!series.subtracted) return { sigmas: own, mixing: null, shared: causes };
 
   const levels = used.map((band) => model.levels(band.label));
   const lowers = levels.map(({ lower }) => (lower === 0 ? null : levels.findIndex((other) => other.upper === lower)));
@@ -24,7 +25,14 @@ export function errorModel(series: Series, used: readonly Band[], model: Model):
     return row;
   });
   const sigmas = own === null ? null : [...own, ...unseen.map((i) => own[i]!)];
-  const sources = offsets === null ? null : [...offsets, ...unseen.map((i) => offsets[i]!)];
-  const shared = sources === null ? [] : [mixing.map((row) => row.reduce((sum, m, k) => sum + m * sources[k]!, 0))];
+  const shared = causes.map((parts, k) => {
+    if (!isOffset(series.shared[k]!)) return parts;
+    const sources = [...parts, ...unseen.map((i) => parts[i]!)];
+    return mixing.map((row) => row.reduce((sum, m, k) => sum + m * sources[k]!, 0));
+  });
   return { sigmas, mixing, shared };
 }
+
+/** Offsets cancel between the two positions a spacing was made from; what grows with the position or with v acts on the spacing itself. */
+const isOffset = ({ kind, sigma }: Shared) =>
+  kind === "calibration" || kind === "laser" || (kind === "group" && sigma.unit !== "ppm");

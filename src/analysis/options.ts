@@ -14,6 +14,8 @@ export interface AnalysisOptions extends ModelOptions {
   readonly scatter: number | null;
   /** a further level of intervals, printed beside the 95 % ones */
   readonly coverage: number | null;
+  /** whether the shift of each group of bands is shown, or only carried in the covariance */
+  readonly groups: "carried" | "fitted";
   readonly robust: RobustKind | null;
   readonly intervals: IntervalKind;
   readonly resamples: number;

@@ -136,6 +136,22 @@ export interface Derived {
   readonly spacingPlotSlope: Quantity;
 }
 
+/** A cause of error that several bands have in common. */
+export interface CommonError {
+  readonly kind: "calibration" | "group" | "per-quantum" | "laser" | "mixture";
+  /** the name of a group */
+  readonly group: string | null;
+  /** in `unit`: cm-1, nm …, or ppm of the position; 1 where the effect itself is the uncertainty */
+  readonly standardUncertainty: number;
+  readonly unit: string;
+  /** how many used bands it acts on */
+  readonly bands: number;
+  /** smallest and largest effect of one standard uncertainty on a band, cm-1, signed */
+  readonly effect: readonly [number, number] | null;
+  /** with --groups fitted: how far the bands of the group are off, observed - true, in `unit` */
+  readonly shift: Quantity | null;
+}
+
 /** Everything `fit` says about one series: the object that stands in the JSON document, and the only thing renderers see. */
 export interface SeriesResult {
   readonly name: string;
@@ -161,6 +177,7 @@ export interface SeriesResult {
   readonly stability: readonly StabilityRow[];
   /** with --terms auto: the numbers of terms compared; otherwise null */
   readonly comparison: readonly ComparisonRow[] | null;
+  readonly commonErrors: readonly CommonError[];
   /** null: intervals to first order */
   readonly intervals: IntervalRecord | null;
   readonly fitReport: {

@@ -10,6 +10,7 @@ import {
 } from "../quantity/index.ts";
 import { type Bond, readBond, reducedMassBond } from "../species/index.ts";
 import { readUncertainty, type Wrong } from "./conversion.ts";
+import { type GroupSigma, groupSigmasFrom, type Laser, laserFrom, perQuantumFrom } from "./read-shared.ts";
 import type { Medium } from "./series.ts";
 import type { Setting, Settings } from "./settings.ts";
 
@@ -25,6 +26,12 @@ export interface Context {
   /** standard uncertainty over stated one; for `sigma` and values after ±, not for parentheses, which are standard ones */
   readonly meaning: number;
   readonly shared: { readonly value: number; readonly unit: UnitName } | null;
+  /** calibration errors by name of the group */
+  readonly groups: ReadonlyMap<string, GroupSigma> | null;
+  /** cm-1 a quantum */
+  readonly perQuantum: number | null;
+  /** positions are scattered wavelengths, and bands their shifts from this line */
+  readonly laser: Laser | null;
   readonly subtracted: boolean;
   readonly bond: Bond | null;
   readonly name: string | null;
@@ -50,10 +57,15 @@ export function readContext(settings: Settings, faults: Fault[]): Context {
   const mass = settings.get("reduced-mass");
   if (bond !== undefined && mass !== undefined)
     wrong(mass, { code: "bond-twice", what: "stands beside --bond", mend: "give one of them" });
+  const medium = read("medium", mediumFrom) ?? "vacuum";
+  const air = read("air", airFrom) ?? standardAir;
   return {
     unit,
-    medium: read("medium", mediumFrom) ?? "vacuum",
-    air: read("air", airFrom) ?? standardAir,
+    medium,
+    air,
+    groups: read("group-sigma", (text) => groupSigmasFrom(text, unit)),
+    perQuantum: read("per-quantum-sigma", perQuantumFrom),
+    laser: read("laser", (text) => laserFrom(text, medium, air)),
     sigma: sigma === null ? null : { ...sigma, text: settings.get("sigma")!.value },
     meaning: read("sigma-means", meaningFrom) ?? 1,
     shared: shared === null ? null : { value: shared.value, unit: shared.unit ?? unit },

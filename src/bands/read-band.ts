@@ -1,16 +1,19 @@
 import type { Fault } from "../messages/index.ts";
-import { isWavelength, readMeasurement } from "../quantity/index.ts";
+import { isWavelength, readMeasurement, type UnitName } from "../quantity/index.ts";
 import type { Bond } from "../species/index.ts";
 import { bondFrom, type Context, isWrong, mediumFrom, unitFrom } from "./context.ts";
 import { type Footing, type Placed, placePosition, rate, readUncertainty, type Wrong } from "./conversion.ts";
 import { canonicalLabel } from "./label.ts";
 import type { ColumnName, RawRow } from "./raw.ts";
+import type { Laser } from "./read-shared.ts";
 import type { Band } from "./series.ts";
 
 /** A band, and whether its air wavelength lies beyond the dispersion formula. */
 export interface ReadBand {
   readonly band: Band;
   readonly extrapolated: boolean;
+  /** wavenumber in vacuum of what was measured: the position, or the scattered light where there is an exciting line */
+  readonly absolute: number;
 }
 
 const YES = ["yes", "y", "true", "1"];
@@ -61,6 +64,10 @@ export function readBand(
     bonds.set(text, known);
     return known;
   });
+  if (context.laser !== null && position !== null) {
+    const stokes = stokesFault(unit, position, context.laser);
+    if (stokes !== null) wrong(isWavelength(unit) ? "position" : "unit", stokes);
+  }
   const companion = read("companion", (text) => placePosition(text, footing));
   const ratio = read("ratio", ratioFrom);
   if (position === null || faults.length > before) return null;
@@ -70,22 +77,41 @@ export function readBand(
       what: "the companion stands where the band stands",
       mend: "give the position of the weaker band of the pair",
     });
+  /** A wavenumber as measured, as the position of a band. */
+  const shift = (wavenumber: number) => (context.laser === null ? wavenumber : context.laser.wavenumber - wavenumber);
   return {
     extrapolated: position.extrapolated,
+    absolute: position.wavenumber,
     band: {
       label,
-      position: position.wavenumber,
+      position: shift(position.wavenumber),
       sigma: sigma?.value ?? null,
       isotopologue,
       use,
       phase: cells.phase ?? context.phase,
       group: cells.group ?? null,
-      companion: companion?.wavenumber ?? null,
+      companion: companion === null ? null : shift(companion.wavenumber),
       ratio,
       note: cells.note ?? null,
       place,
       asRead: { text: cells.position!, unit, medium, sigmaText: sigma?.text ?? null },
     },
+  };
+}
+
+/** With an exciting line positions are scattered wavelengths, to the red of it. */
+function stokesFault(unit: UnitName, { wavenumber }: Placed, laser: Laser): Wrong | null {
+  if (!isWavelength(unit))
+    return {
+      code: "laser-without-wavelength",
+      what: `a laser is given, but the position is in ${unit}`,
+      mend: "write scattered wavelengths with --unit nm, or leave --laser out for shifts in cm-1",
+    };
+  if (wavenumber < laser.wavenumber) return null;
+  return {
+    code: "not-stokes",
+    what: `the scattered light does not lie to the red of the laser at ${(1e7 / laser.wavenumber).toFixed(2)} nm (vacuum)`,
+    mend: "give Stokes lines, at longer wavelengths than the laser, or mend --laser",
   };
 }
 

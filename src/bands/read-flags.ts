@@ -6,9 +6,15 @@ import type { RawRow } from "./raw.ts";
 
 /**
  * Rows of `--series`: consecutive overtones from `from`-0 on, split by spaces, commas or semicolons. `unit` as typed: overtones rise in
- * energy, so wavelengths fall. Throws InputError.
+ * energy, so wavelengths fall; those of `scattered` light rise. Throws InputError.
  */
-export function rowsFromSeries(text: string, from: string | null, unit: string | null, place: Place): RawRow[] {
+export function rowsFromSeries(
+  text: string,
+  from: string | null,
+  unit: string | null,
+  place: Place,
+  scattered = false,
+): RawRow[] {
   const faults: Fault[] = [];
   const first = from === null || from.trim() === "" ? 1 : Number(from);
   if (!(Number.isInteger(first) && first >= 1 && first < 1000))
@@ -38,7 +44,7 @@ export function rowsFromSeries(text: string, from: string | null, unit: string |
       what: `"${stray}" stands among the positions`,
       mend: `write ${readUnit(stray) === null ? "--medium" : "--unit"} ${stray}, which holds for all of them`,
     });
-  if (faults.length === 0) faults.push(...fallFaults(words, unit, place));
+  if (faults.length === 0) faults.push(...fallFaults(words, unit, place, scattered));
   if (faults.length > 0) throw new InputError(faults);
   return words.map((position, i) => ({
     cells: { band: `${first + i}-0`, position },
@@ -47,13 +53,13 @@ export function rowsFromSeries(text: string, from: string | null, unit: string |
 }
 
 /** Positions that fall are no overtones: spacings, or wavelengths without their unit. */
-function fallFaults(words: readonly string[], unit: string | null, place: Place): Fault[] {
+function fallFaults(words: readonly string[], unit: string | null, place: Place, scattered: boolean): Fault[] {
   const values = words.map((word) => {
     const read = readMeasurement(word);
     return read.ok ? read.value : Number.NaN;
   });
   const read = readUnit(unit ?? "cm-1");
-  const sign = read !== null && isWavelength(read) ? -1 : 1;
+  const sign = read !== null && isWavelength(read) && !scattered ? -1 : 1;
   const fall = values.findIndex((value, i) => i > 0 && sign * value <= sign * values[i - 1]!);
   if (fall < 0) return [];
   return [

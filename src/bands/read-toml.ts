@@ -38,7 +38,9 @@ export function readToml(text: string, source: string): RawInput {
     return line === null ? at(null, `${name} ${n + 1}`) : at(line);
   };
 
-  for (const [key, value] of Object.entries(document(text, source))) {
+  const written = document(text, source);
+  const scattered = Object.hasOwn(written, "laser");
+  for (const [key, value] of Object.entries(written)) {
     const name = key.toLowerCase().replaceAll("_", "-");
     const place = at(lines.key(key), key);
     const tables = tablesOf(value);
@@ -49,7 +51,7 @@ export function readToml(text: string, source: string): RawInput {
       let seen = 0;
       const nextPlace = () => placeOf(`${key}.bands`, seen++, all);
       for (const [i, table] of tables.entries())
-        rows.push(...seriesRows(table, i, placeOf(key, i, tables.length), nextPlace, faults));
+        rows.push(...seriesRows(table, i, placeOf(key, i, tables.length), nextPlace, scattered, faults));
     } else if (!settingNames.includes(name)) faults.push(unknown(place, key, settingNames));
     else {
       const written = textOf(value, name === "bands" ? "; " : " ");
@@ -109,7 +111,14 @@ function rowOf(table: Table, place: Place, defaults: Cells, faults: Fault[]): Ra
 }
 
 /** Rows of a `[[series]]` table; `nextPlace` gives the place of each of its `[[series.bands]]`. */
-function seriesRows(table: Table, n: number, place: Place, nextPlace: () => Place, faults: Fault[]): RawRow[] {
+function seriesRows(
+  table: Table,
+  n: number,
+  place: Place,
+  nextPlace: () => Place,
+  scattered: boolean,
+  faults: Fault[],
+): RawRow[] {
   const defaults: Partial<Record<ColumnName, string>> = { series: `series ${n + 1}` };
   for (const [key, value] of Object.entries(table)) {
     if (["bands", "series", "from"].includes(key)) continue;
@@ -130,7 +139,7 @@ function seriesRows(table: Table, n: number, place: Place, nextPlace: () => Plac
     const rows =
       bands !== null
         ? rowsFromBands(bands, place)
-        : rowsFromSeries(series!, textOf(table.from), defaults.unit ?? null, place);
+        : rowsFromSeries(series!, textOf(table.from), defaults.unit ?? null, place, scattered);
     return rows.map((row) => ({ cells: { ...defaults, ...row.cells }, place: row.place }));
   } catch (error) {
     if (!(error instanceof InputError)) throw error;

@@ -31,13 +31,24 @@ export interface Band {
   readonly asRead: AsRead;
 }
 
+/** One cause of error that bands have in common. */
+export interface Shared {
+  readonly kind: "calibration" | "group" | "per-quantum" | "laser" | "mixture";
+  /** of `group`: its name, and otherwise null */
+  readonly group: string | null;
+  /** its standard uncertainty in its own unit: cm-1, nm … or ppm */
+  readonly sigma: { readonly value: number; readonly unit: string };
+  /** what one standard uncertainty of it does to each band of the series, signed, cm-1 */
+  readonly parts: readonly number[];
+}
+
 /** The bands of one oscillator, on a common footing: cm-1 in vacuum. */
 export interface Series {
   readonly name: string;
   readonly bond: Bond | null;
   readonly bands: readonly Band[];
-  /** Fully correlated part of the uncertainty, one signed entry a band in cm-1; null without one. */
-  readonly shared: readonly number[] | null;
+  /** Fully correlated parts of the uncertainty; independent of each other. */
+  readonly shared: readonly Shared[];
   /** true: spacings (v+1 - v) were subtracted from measured positions, so neighbours share errors. */
   readonly subtracted: boolean;
   readonly warnings: readonly Warning[];

@@ -1,11 +1,12 @@
 import { type Fault, InputError, type Warning } from "../messages/index.ts";
 import type { Bond } from "../species/index.ts";
 import { type Context, readContext } from "./context.ts";
-import { rate, type Wrong } from "./conversion.ts";
+import type { Wrong } from "./conversion.ts";
 import type { RawRow } from "./raw.ts";
 import { type ReadBand, readBand } from "./read-band.ts";
 import type { Series } from "./series.ts";
 import type { Settings } from "./settings.ts";
+import { groupWithoutBands, sharedParts } from "./shared-parts.ts";
 import { phaseFaults, repeatChecks } from "./validate.ts";
 import { aboutAir, aboutBond, aboutMeaning, aboutSigma } from "./warnings.ts";
 
@@ -33,6 +34,9 @@ export function toSeries(rows: readonly RawRow[], settings: Settings): Understoo
     else group.push(read);
   }
   const several = groups.size > 1;
+  const all = [...groups.values()].flat();
+  const lost = all.length === 0 ? null : groupWithoutBands(all, context);
+  if (lost !== null) faults.push({ ...lost, place: settings.get("group-sigma")!.place });
   const series = [...groups].map(([name, bands]) => oneSeries(name, bands, context, several, faults));
   if (faults.length > 0) throw new InputError(faults);
   return { series, warnings: [] };
@@ -65,7 +69,7 @@ function oneSeries(
     name: name ?? context.name ?? bond?.text ?? "oscillator",
     bond,
     bands,
-    shared: sharedPart(read, context),
+    shared: sharedParts(read, context),
     subtracted: context.subtracted,
     warnings: [
       ...warnings,
@@ -75,10 +79,4 @@ function oneSeries(
       ...aboutAir(read.filter(({ extrapolated }) => extrapolated).map(({ band }) => band)),
     ],
   };
-}
-
-/** The calibration offset of each band in cm-1, signed: dν̃/d(unit) times the offset in its own unit. */
-function sharedPart(read: readonly ReadBand[], { shared, medium, air }: Context): number[] | null {
-  if (shared === null) return null;
-  return read.map(({ band }) => shared.value * rate(band.position, shared.unit, { unit: shared.unit, medium, air }));
 }

@@ -48,6 +48,26 @@ export const bandFlags: readonly Flag[] = [
     value: "U",
     help: "calibration offset common to all bands, fully correlated, such as 0.02 or 0.01 nm",
   },
+  {
+    name: "group-sigma",
+    value: '"NAME=U, …"',
+    help: 'calibration errors of the groups of the column group: an offset or a scale, such as "fts=0.01, dye=0.02 nm, diode=2 ppm"',
+  },
+  {
+    name: "groups",
+    value: "KIND",
+    help: "errors of groups: carried as correlated, or fitted: also show the shift of each (default carried)",
+  },
+  {
+    name: "per-quantum-sigma",
+    value: "U",
+    help: "of maxima given as origins: standard uncertainty in cm-1 for every quantum, fully correlated",
+  },
+  {
+    name: "laser",
+    value: "NM",
+    help: "Raman: positions are scattered wavelengths in nm, bands their shifts from this line, such as 532.0",
+  },
   { name: "phase", value: "TEXT", help: "phase of the sample, kept with the bands" },
   { name: "format", value: "KIND", help: "of FILE: csv, tsv or toml (default by its name; csv for standard input)" },
 ];

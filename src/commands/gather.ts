@@ -77,6 +77,7 @@ function bandsOf(settings: Settings, flags: Settings, file: Awaited<ReturnType<t
           settings.get("from")?.value ?? null,
           settings.get("unit")?.value ?? null,
           setting.place,
+          settings.has("laser"),
         )
       : rowsFromBands(setting.value, setting.place);
   return toSeries(rows, settings);

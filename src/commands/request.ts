@@ -33,6 +33,14 @@ export interface FitRequest {
   readonly sigmaMeans?: string;
   /** a calibration offset common to all bands, fully correlated */
   readonly sharedSigma?: Word;
+  /** calibration errors of the groups of the column `group`, such as "fts=0.01, dye=0.02 nm, diode=2 ppm" */
+  readonly groupSigma?: string;
+  /** whether the shift of each group is shown ("fitted") or only carried as a correlated error; @default "carried" */
+  readonly groups?: string;
+  /** standard uncertainty a quantum, correlated and growing with v, of maxima given as origins; cm-1 */
+  readonly perQuantumSigma?: Word;
+  /** Raman: positions are scattered wavelengths; wavelength of the exciting line in nm */
+  readonly laser?: Word;
   readonly bond?: string;
   /** u */
   readonly reducedMass?: Word;

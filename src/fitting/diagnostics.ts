@@ -1,6 +1,6 @@
 import { dot, type LinearFit, weightedJacobian } from "./linear.ts";
 import { triangularise } from "./qr.ts";
-import { whiten, whitenTransposed } from "./whitening.ts";
+import { timesInverse, whiten, whitenTransposed } from "./whitening.ts";
 
 /** A share of the weight below which a datum is fitted by constants of its own: nothing is left to test. */
 const NOTHING_LEFT = 1e-9;
@@ -23,9 +23,7 @@ export function diagnose(fit: LinearFit, groups: readonly (readonly number[])[])
   const n = fit.residuals.length;
   const weighted = weightedJacobian(fit.jacobian, fit.whitening);
   const inverse = inverseCovariance(fit);
-  const weightedResiduals = Float64Array.from(fit.residuals);
-  whiten(fit.whitening, weightedResiduals);
-  whitenTransposed(fit.whitening, weightedResiduals);
+  const weightedResiduals = timesInverse(fit.whitening, fit.residuals);
   const pulled = weighted.map((row) => fit.gram.map((g) => dot(g, row)));
   const q = (i: number, j: number) => inverse(i, j) - dot(weighted[i]!, pulled[j]!);
   const free = (i: number) => q(i, i) > NOTHING_LEFT * inverse(i, i);

@@ -9,4 +9,4 @@ export * from "./profile.ts";
 export { inverseGram, triangularise } from "./qr.ts";
 export * from "./resampling.ts";
 export * from "./robust.ts";
-export { covarianceOf } from "./whitening.ts";
+export { covarianceOf, timesInverse } from "./whitening.ts";

@@ -93,3 +93,11 @@ export function whitenTransposed({ diagonal, lower, size }: Whitening, x: Float6
     x[i] = sum / lower![i * size + i]!;
   }
 }
+
+/** V⁻¹·x. */
+export function timesInverse(whitening: Whitening, x: readonly number[]): Float64Array {
+  const column = Float64Array.from(x);
+  whiten(whitening, column);
+  whitenTransposed(whitening, column);
+  return column;
+}

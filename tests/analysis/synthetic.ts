@@ -20,6 +20,7 @@ export const defaults: AnalysisOptions = {
   excess: "scatter",
   scatter: null,
   robust: null,
+  groups: "carried",
   coverage: null,
   intervals: "linear",
   resamples: 2000,
@@ -61,7 +62,7 @@ export function synthetic(
       asRead: { text: "", unit: "cm-1", medium: "vacuum", sigmaText: null },
     }),
   );
-  return { name: "synthetic", bond: null, bands, shared: null, subtracted: false, warnings: [] };
+  return { name: "synthetic", bond: null, bands, shared: [], subtracted: false, warnings: [] };
 }
 
 /** Fit a synthetic series. */

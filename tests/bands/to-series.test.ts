@@ -108,16 +108,16 @@ describe("uncertainties become standard ones in cm-1", () => {
 
   it("a shared offset in nm has one negative entry a band, -s·ν̃²/1e7; in cm-1 it is the same everywhere", () => {
     const bands = "1-0 3000, 2-0 6000";
-    const inNm = one(bands, { "shared-sigma": "0.01 nm" }).shared!;
+    const inNm = one(bands, { "shared-sigma": "0.01 nm" }).shared[0]!.parts;
     // s·ν̃²/1e7: 0.009 and 0.036
     expect(Math.abs(inNm[0]! / -0.009 - 1)).toBeLessThan(ROUNDING);
     expect(Math.abs(inNm[1]! / -0.036 - 1)).toBeLessThan(ROUNDING);
-    expect(one(bands, { "shared-sigma": "0.02" }).shared).toEqual([0.02, 0.02]);
-    expect(one(bands).shared).toBeNull();
+    expect(one(bands, { "shared-sigma": "0.02" }).shared.map(({ parts }) => parts)).toEqual([[0.02, 0.02]]);
+    expect(one(bands).shared).toEqual([]);
   });
 
   it("a bare shared offset is in the unit of the request", () => {
-    const [offset] = one("3-0 1000", { unit: "nm", "shared-sigma": "0.01" }).shared!;
+    const [offset] = one("3-0 1000", { unit: "nm", "shared-sigma": "0.01" }).shared[0]!.parts;
     expect(Math.abs(offset! / -0.1 - 1)).toBeLessThan(ROUNDING);
   });
 });

@@ -31,8 +31,16 @@ function solving(series: readonly SeriesResult[], request: FitDocument["request"
       ? `The positions themselves are fitted by generalised least squares with the inverse covariance of the stated uncertainties as weights ${cite("aitken1936")}, ${how()}.`
       : `The positions themselves are fitted by least squares with equal weights, ${how()}; uncertainties come from the residual variance.`,
   ];
-  if (request["shared-sigma"] !== undefined)
-    text.push("An offset common to all bands enters the covariance as fully correlated.");
+  if (request.laser !== undefined)
+    text.push(
+      `Bands are Raman shifts: the wavenumber of the exciting line (${request.laser} nm) less that of the scattered light.`,
+    );
+  if (some(series, ({ commonErrors }) => commonErrors.length > 0))
+    text.push("Errors that bands have in common enter the covariance as fully correlated.");
+  if (some(series, ({ commonErrors }) => commonErrors.some(({ shift }) => shift !== null)))
+    text.push(
+      "The shifts of the groups are the estimates that this covariance implies: constants of the fit with their prior.",
+    );
   if (request.spacings === "subtracted")
     text.push(
       "Spacings were subtracted from measured positions, so neighbours share errors: the covariance is tridiagonal.",

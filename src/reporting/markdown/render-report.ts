@@ -4,6 +4,7 @@ import type { Symbols } from "../symbols.ts";
 import type { TableData } from "../table-data.ts";
 import {
   bandsTable,
+  commonErrorsTable,
   constantsComparison,
   constantsTable,
   correlation,
@@ -55,6 +56,7 @@ export function renderReport(document: FitDocument, options: ReportOptions): str
     ["Excluded bands", each(excludedBands)],
     ["Constants", [...side((all) => constantsComparison(all, symbols)), ...each((one) => constantsPart(one, symbols))]],
     ["Observed − calculated", each((one) => table(bandsTable(one)))],
+    ["Errors in common", tablesOf(series, commonErrorsTable)],
     [
       "Dissociation energy",
       [...side(dissociationComparison), ...each((one) => table(dissociationTable(one))), SAFETY_LINE],
@@ -76,6 +78,12 @@ export function renderReport(document: FitDocument, options: ReportOptions): str
 /** One text a series, under its name when there are several. */
 function perSeries(series: readonly SeriesResult[], write: (one: SeriesResult) => string): string[] {
   return series.flatMap((one) => (series.length > 1 ? [`### ${verbatim(one.name)}`, write(one)] : [write(one)]));
+}
+
+/** A table of those series that have one; empty when none has. */
+function tablesOf(series: readonly SeriesResult[], make: (one: SeriesResult) => TableData | null): string[] {
+  const having = series.filter((one) => make(one) !== null);
+  return having.flatMap((one) => [...(series.length > 1 ? [`### ${verbatim(one.name)}`] : []), table(make(one)!)]);
 }
 
 function constantsPart(one: SeriesResult, symbols: Symbols): string {

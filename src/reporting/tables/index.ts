@@ -1,4 +1,5 @@
 export { bandsTable, exclusions } from "./bands.ts";
+export { commonErrorsTable } from "./common-errors.ts";
 export { constantsComparison, dissociationComparison, termsTable } from "./comparison.ts";
 export { constantsTable, correlation } from "./constants.ts";
 export { derivedTable } from "./derived.ts";

@@ -2,6 +2,7 @@ import type { SeriesResult } from "../../analysis/index.ts";
 import { type Symbols, symbolOf } from "../symbols.ts";
 import {
   bandsTable,
+  commonErrorsTable,
   constantsTable,
   correlation,
   derivedTable,
@@ -27,12 +28,14 @@ export function renderSeries(series: SeriesResult, symbols: Symbols, paint: Pain
   const dissociation = dissociationTable(series);
   const terms = termsTable(series);
   const derived = derivedTable(series);
+  const common = commonErrorsTable(series);
   const { fitReport, predictions } = series;
   return [
     headline(series, paint),
     section("Constants", [constantsTable(series, symbols), correlation(series, symbols)], paint),
     terms === null ? null : section("Number of terms", [terms], paint),
     section("Bands", [bandsTable(series), ...exclusions(series)], paint),
+    common === null ? null : section("Errors in common", [common], paint),
     section("Dissociation", [{ ...dissociation, notes: dissociation.notes.map(printUnits) }, SAFETY_LINE], paint),
     derived === null ? null : section("Derived", [derived], paint),
     predictions.length === 0 ? null : section("Predictions", [predictionsTable(predictions), LASER_LINE], paint),

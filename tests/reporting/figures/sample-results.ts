@@ -163,6 +163,7 @@ export function sampleResult(sample: Sample = {}): SeriesResult {
     }),
     accepted: null,
     comparison: null,
+    commonErrors: [],
     intervals: null,
     stability: [],
     fitReport: { method: "QR", converged: true, reason: "linear", iterations: 1 },
