@@ -18,6 +18,7 @@ import { propagate } from "./propagation.ts";
 import type { BandResult, Prediction, Quality, SeriesResult } from "./result.ts";
 import { type Solution, solve } from "./solution.ts";
 import { stabilityRows } from "./stability.ts";
+import { thermochemistry } from "./thermochemistry/thermochemistry.ts";
 import { y00Of } from "./y00.ts";
 
 /** How many overtones beyond the last band are predicted when nothing else is asked. */
@@ -41,6 +42,7 @@ export function analyse(measured: Series, model: Model, given: AnalysisOptions):
   const { first, warnings, ...follows } = whatFollows(solution);
   const known = acceptedD0(solution);
   const common = commonErrors(solution);
+  const heat = thermochemistry(solution, follows.dissociation, known.accepted);
   return refineIntervals(solution, {
     name: series.name,
     model: model.name,
@@ -61,6 +63,7 @@ export function analyse(measured: Series, model: Model, given: AnalysisOptions):
     bands: bandResults(solution),
     ...follows,
     accepted: known.accepted,
+    thermochemistry: heat.thermochemistry,
     comparison: choice?.comparison ?? null,
     commonErrors: common.errors,
     intervals: null,
@@ -80,6 +83,7 @@ export function analyse(measured: Series, model: Model, given: AnalysisOptions):
       ...fitWarnings(solution, choice !== null).filter(({ code }) => first.length === 0 || code !== "band-stands-out"),
       ...warnings,
       ...known.warnings,
+      ...heat.warnings,
     ],
   });
 }

@@ -25,6 +25,10 @@ export interface AnalysisOptions extends ModelOptions {
   readonly air: AirConditions;
   /** an accepted D0 in cm-1 to compare with, with its standard uncertainty if known; null: none */
   readonly accepted: { readonly value: number; readonly sigma: number | null } | null;
+  /** the bond is the whole molecule: enthalpies at 298.15 K follow */
+  readonly diatomic: boolean;
+  /** an accepted ΔH°(298.15 K) in kJ/mol to compare with; null: none */
+  readonly acceptedEnthalpy: { readonly value: number; readonly sigma: number | null } | null;
   /** rotational constants in cm-1, bond length in Å */
   readonly be: number | null;
   readonly alphaE: number | null;

@@ -136,6 +136,25 @@ export interface Derived {
   readonly spacingPlotSlope: Quantity;
 }
 
+/** D0 as an enthalpy of dissociation at 298.15 K, of a bond that is a whole molecule; kJ/mol. */
+export interface Thermochemistry {
+  /** K */
+  readonly temperature: number;
+  /** H°(298.15 K) - H°(0) of the atoms and of the molecule */
+  readonly atoms: readonly { readonly element: string; readonly enthalpy: number }[];
+  readonly molecule: number;
+  /** ΔH°(298.15 K) of A-B → A + B from each row of the dissociation table */
+  readonly rows: readonly {
+    readonly method: DissociationMethod;
+    readonly enthalpy: Quantity | null;
+    readonly empiricalRange: readonly [number, number] | null;
+    /** fitted - accepted */
+    readonly lessAccepted: Quantity | null;
+  }[];
+  /** given by the user, or from an accepted D0 */
+  readonly accepted: Quantity | null;
+}
+
 /** A cause of error that several bands have in common. */
 export interface CommonError {
   readonly kind: "calibration" | "group" | "per-quantum" | "laser" | "mixture";
@@ -171,6 +190,8 @@ export interface SeriesResult {
   readonly dissociation: readonly DissociationRow[];
   /** an accepted D0 given by the user, cm-1; null without one */
   readonly accepted: Quantity | null;
+  /** null unless asked for */
+  readonly thermochemistry: Thermochemistry | null;
   /** null for models without a well around the minimum */
   readonly derived: Derived | null;
   readonly predictions: readonly Prediction[];

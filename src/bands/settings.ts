@@ -39,6 +39,8 @@ export const settingNames: readonly string[] = [
   "be",
   "alpha-e",
   "accepted",
+  "accepted-enthalpy",
+  "diatomic",
   "re",
   "excess",
   "scatter",

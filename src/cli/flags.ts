@@ -80,6 +80,8 @@ export const moleculeFlags: readonly Flag[] = [
   { name: "be", value: "B", help: "rotational constant Be in cm-1, for Y00" },
   { name: "alpha-e", value: "A", help: "vibration-rotation constant αe in cm-1, for Y00" },
   { name: "accepted", value: "D0", help: "accepted D0 to compare with, such as 35759(5) or 4.4336 eV" },
+  { name: "diatomic", value: null, help: "the bond is the whole molecule: also ΔH° of dissociation at 298.15 K" },
+  { name: "accepted-enthalpy", value: "H", help: "accepted ΔH° at 298.15 K to compare with, such as 431.6(1) kJ/mol" },
   { name: "re", value: "R", help: "bond length re in Å, in place of --be (with a bond)" },
 ];
 

@@ -5,6 +5,7 @@ import { type Fault, nearest } from "../messages/index.ts";
 import { type Fixed, findModel, type Model, modelNames, type Notation } from "../models/index.ts";
 import {
   type AirConditions,
+  fromWavenumber,
   isWavelength,
   readAir,
   readMeasurement,
@@ -90,11 +91,21 @@ export async function readOptions(
     seed: reader.number("seed", whole(0, 2 ** 31), "write a whole number such as 1") ?? 1,
     upTo: reader.number("up-to", whole(1, 500), "write the highest level to predict, such as 9"),
     air: readAirConditions(reader),
-    accepted: readAccepted(reader),
+    accepted: readAccepted(reader, "accepted", "D0", "35759(5), or with its unit, 4.4336 eV", "cm-1"),
+    diatomic: reader.choice("diatomic", ["yes", "no"], "no") === "yes",
+    acceptedEnthalpy: readAccepted(reader, "accepted-enthalpy", "ΔH°(298.15 K)", "431.6(1) in kJ/mol", "kJ/mol"),
     be: reader.number("be", positive, "write Be in cm-1, such as 10.593"),
     alphaE: reader.number("alpha-e", Number.isFinite, "write αe in cm-1, such as 0.307"),
     re: reader.number("re", positive, "write re in Å, such as 1.2746"),
   };
+  const enthalpy = settings.get("accepted-enthalpy");
+  if (enthalpy !== undefined && !analysis.diatomic)
+    reader.fault(
+      enthalpy,
+      "enthalpy-without-diatomic",
+      "an accepted enthalpy can be compared for a diatomic molecule only",
+      "add --diatomic, or give an accepted D0 with --accepted",
+    );
   if (model !== null) checkOwnSettings(reader, model);
   const notation = reader.choice<Notation>("notation", ["equilibrium", "local"], "equilibrium");
   if (model === null || reader.faults.length > 0) return { options: null, faults: reader.faults };
@@ -122,19 +133,25 @@ async function readModel(reader: Reader): Promise<Model | null> {
   return model;
 }
 
-/** `--accepted "35759(5)"`, in cm-1 or with a unit of energy. */
-function readAccepted(reader: Reader): AnalysisOptions["accepted"] {
-  const setting = reader.settings.get("accepted");
+/** `--accepted "35759(5)"` or `--accepted-enthalpy 431.6`, in `unit` or with a unit of energy; comes back in `unit`. */
+function readAccepted(
+  reader: Reader,
+  name: string,
+  what: string,
+  example: string,
+  unit: "cm-1" | "kJ/mol",
+): AnalysisOptions["accepted"] {
+  const setting = reader.settings.get(name);
   if (setting === undefined) return null;
-  const mend = "write an accepted D0 such as 35759(5), or with its unit, 4.4336 eV";
-  const { number, unit } = splitUnit(setting.value);
+  const mend = `write an accepted ${what} such as ${example}`;
+  const { number, unit: own } = splitUnit(setting.value);
   const read = readMeasurement(number);
   if (!read.ok) return reader.fault(setting, "not-a-number", read.what, mend);
-  if (!(read.value > 0)) return reader.fault(setting, "out-of-range", "an accepted D0 must be positive", mend);
-  if (unit !== null && isWavelength(unit))
-    return reader.fault(setting, "unknown-unit", `${unit} is no unit of a dissociation energy`, mend);
-  const toWavenumbers = (x: number) => toWavenumber(x, unit ?? "cm-1");
-  return { value: toWavenumbers(read.value), sigma: read.sigma === null ? null : toWavenumbers(read.sigma) };
+  if (!(read.value > 0)) return reader.fault(setting, "out-of-range", `an accepted ${what} must be positive`, mend);
+  if (own !== null && isWavelength(own))
+    return reader.fault(setting, "unknown-unit", `${own} is no unit of a dissociation energy`, mend);
+  const convert = (x: number) => (own === null ? x : fromWavenumber(toWavenumber(x, own), unit));
+  return { value: convert(read.value), sigma: read.sigma === null ? null : convert(read.sigma) };
 }
 
 function readAirConditions(reader: Reader): AirConditions {

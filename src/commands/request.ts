@@ -63,6 +63,10 @@ export interface FitRequest {
   readonly re?: Word;
   /** an accepted D0 to compare with, such as "35759(5)" cm-1 or "4.4336 eV" */
   readonly accepted?: Word;
+  /** the bond is the whole molecule: also ΔH°(298.15 K) of dissociation; @default no */
+  readonly diatomic?: boolean | string;
+  /** an accepted ΔH°(298.15 K) to compare with, such as "431.6(1)" kJ/mol */
+  readonly acceptedEnthalpy?: Word;
   /** @default "scatter" */
   readonly excess?: string;
   /** a given scatter τ in cm-1 */
@@ -92,9 +96,10 @@ export const flagName = (key: string) => key.replace(/[A-Z]/g, (letter) => `-${l
 export function requestSettings(request: object): Settings {
   const settings = new Map<string, Setting>();
   for (const [key, value] of Object.entries(request)) {
-    if (typeof value !== "string" && typeof value !== "number") continue;
+    if (typeof value !== "string" && typeof value !== "number" && typeof value !== "boolean") continue;
     const name = flagName(key);
-    settings.set(name, { value: String(value), place: { source: `--${name}` } });
+    const text = typeof value === "boolean" ? (value ? "yes" : "no") : String(value);
+    settings.set(name, { value: text, place: { source: `--${name}` } });
   }
   return settings;
 }

@@ -21,6 +21,8 @@ export const defaults: AnalysisOptions = {
   scatter: null,
   robust: null,
   groups: "carried",
+  diatomic: false,
+  acceptedEnthalpy: null,
   coverage: null,
   intervals: "linear",
   resamples: 2000,

@@ -37,6 +37,7 @@ describe("the schemas describe every key of the documents, and no document has a
     ],
     ["draws", { ...hcl, intervals: "resample", resamples: 200, terms: 3 }],
     ["a robust fit", { ...hcl, robust: "tukey" }],
+    ["an enthalpy", { ...hcl, diatomic: true, acceptedEnthalpy: "431.6(1)" }],
     ["groups and a mixture", { ...hcl, bond: "H Cl", sharedSigma: 0.01 }],
     ["a file of two bonds with excluded bands", { input: file("demo/bonds-a-and-b.csv") }],
     ["levels refused as not near the limit", { input: file("h2.csv"), model: "near-limit", power: 6 }],

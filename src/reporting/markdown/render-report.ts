@@ -17,6 +17,7 @@ import {
   SAFETY_LINE,
   stabilityTable,
   termsTable,
+  thermochemistryTable,
 } from "../tables/index.ts";
 import { andList } from "../text/lists.ts";
 import { bandsAsRead, excludedBands } from "./bands-section.ts";
@@ -61,6 +62,7 @@ export function renderReport(document: FitDocument, options: ReportOptions): str
       "Dissociation energy",
       [...side(dissociationComparison), ...each((one) => table(dissociationTable(one))), SAFETY_LINE],
     ],
+    ["Enthalpy of dissociation", tablesOf(series, thermochemistryTable)],
     ["Derived numbers", each(derivedPart)],
     ["Predictions", [...each(predictionsPart), LASER_LINE]],
     ["Stability", each((one) => stabilityPart(one, symbols))],

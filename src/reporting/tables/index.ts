@@ -7,3 +7,4 @@ export { dissociationTable, SAFETY_LINE } from "./dissociation.ts";
 export { LASER_LINE, predictionsTable } from "./predictions.ts";
 export { qualityEntries } from "./quality.ts";
 export { stabilityTable } from "./stability.ts";
+export { thermochemistryTable } from "./thermochemistry.ts";

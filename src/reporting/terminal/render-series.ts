@@ -14,6 +14,7 @@ import {
   SAFETY_LINE,
   stabilityTable,
   termsTable,
+  thermochemistryTable,
 } from "../tables/index.ts";
 import { bondText } from "../text/bond-text.ts";
 import { exact, quantity } from "../text/cells.ts";
@@ -29,6 +30,7 @@ export function renderSeries(series: SeriesResult, symbols: Symbols, paint: Pain
   const terms = termsTable(series);
   const derived = derivedTable(series);
   const common = commonErrorsTable(series);
+  const heat = thermochemistryTable(series);
   const { fitReport, predictions } = series;
   return [
     headline(series, paint),
@@ -37,6 +39,7 @@ export function renderSeries(series: SeriesResult, symbols: Symbols, paint: Pain
     section("Bands", [bandsTable(series), ...exclusions(series)], paint),
     common === null ? null : section("Errors in common", [common], paint),
     section("Dissociation", [{ ...dissociation, notes: dissociation.notes.map(printUnits) }, SAFETY_LINE], paint),
+    heat === null ? null : section("Enthalpy of dissociation", [heat], paint),
     derived === null ? null : section("Derived", [derived], paint),
     predictions.length === 0 ? null : section("Predictions", [predictionsTable(predictions), LASER_LINE], paint),
     stabilityBlock(series, symbols, paint),

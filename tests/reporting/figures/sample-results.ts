@@ -164,6 +164,7 @@ export function sampleResult(sample: Sample = {}): SeriesResult {
     accepted: null,
     comparison: null,
     commonErrors: [],
+    thermochemistry: null,
     intervals: null,
     stability: [],
     fitReport: { method: "QR", converged: true, reason: "linear", iterations: 1 },
