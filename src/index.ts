@@ -8,6 +8,7 @@ export type {
   SeriesResult,
   StabilityRow,
 } from "./analysis/index.ts";
+export { type AssignDocument, type AssignRequest, assign } from "./commands/assign.ts";
 export { type CheckDocument, type CheckRequest, check, type Difference } from "./commands/check.ts";
 export { type ConvertDocument, type ConvertRequest, convert } from "./commands/convert.ts";
 export { fit } from "./commands/fit.ts";

@@ -1,4 +1,5 @@
 export { analyse } from "./analyse.ts";
+export { type Assignment, assignPeaks, type Decider, type Hypothesis } from "./assign/assign.ts";
 export { labelsWithin } from "./near-limit/levels.ts";
 export type { AnalysisOptions, ExcessKind, IntervalKind } from "./options.ts";
 export { predict } from "./predictions.ts";

@@ -8,7 +8,7 @@ import { type Setting, settingNames } from "./settings.ts";
  * Read CSV or TSV. `#` at the start of a line or after a space begins a comment (in a label, `210E#2`, it does not);
  * `# name: value` above the header is a setting when the name is one. Lines keep their numbers.
  */
-export function readCsv(text: string, source: string, delimiter: string): RawInput {
+export function readCsv(text: string, source: string, delimiter: string, labelled = true): RawInput {
   const faults: Fault[] = [];
   const lines = text.split(/\r\n|\n|\r/);
   const headerAt = lines.findIndex((line) => line.trim() !== "" && !/^\s*#/.test(line));
@@ -26,7 +26,7 @@ export function readCsv(text: string, source: string, delimiter: string): RawInp
     });
     throw new InputError(faults);
   }
-  const columns = readHeader(header.cells, { source, line: header.line }, faults);
+  const columns = readHeader(header.cells, { source, line: header.line }, faults, labelled);
   if (columns.every((column) => column === null)) throw new InputError(faults);
   if (records.length === 0)
     faults.push({

@@ -33,8 +33,13 @@ const RESULT_COLUMNS: ReadonlySet<string> = new Set([
   "as_read_medium",
 ]);
 
-/** The columns a header names, null for one that is none; what is wrong is added to `faults`. */
-export function readHeader(cells: readonly string[], place: Place, faults: Fault[]): (ColumnName | null)[] {
+/** The columns a header names, null for one that is none; what is wrong is added to `faults`. `labelled`: rows need labels. */
+export function readHeader(
+  cells: readonly string[],
+  place: Place,
+  faults: Fault[],
+  labelled = true,
+): (ColumnName | null)[] {
   const fault = (code: string, what: string, mend: string) => faults.push({ code, place, what, mend });
   const columns = cells.map(columnOf);
   const nothing = columns.every((column) => column === null) ? noHeader(cells) : null;
@@ -52,7 +57,7 @@ export function readHeader(cells: readonly string[], place: Place, faults: Fault
   });
   if (!columns.includes("position"))
     fault("no-position", "has no column position", "begin the table with a line such as band,position");
-  if (!columns.includes("band") && !(columns.includes("upper") && columns.includes("lower")))
+  if (labelled && !columns.includes("band") && !(columns.includes("upper") && columns.includes("lower")))
     fault(
       "no-label",
       "has no column with the labels of the bands",

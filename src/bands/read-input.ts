@@ -11,9 +11,9 @@ export function formatOf(fileName: string): InputFormat | null {
 
 /**
  * Read the text of a band file into settings and rows; nothing is understood yet. The parsers are loaded when they are needed.
- * Throws InputError with the place of everything wrong with its form.
+ * `labelled`: every row needs a label. Throws InputError with the place of everything wrong with its form.
  */
-export async function readInput(text: string, source: string, format: InputFormat): Promise<RawInput> {
+export async function readInput(text: string, source: string, format: InputFormat, labelled = true): Promise<RawInput> {
   const plain = text.replace(/^\uFEFF/, "");
   const fault = (code: string, what: string, mend: string, line?: number) =>
     new InputError([{ code, place: line === undefined ? { source } : { source, line }, what, mend }]);
@@ -30,5 +30,5 @@ export async function readInput(text: string, source: string, format: InputForma
   if (plain.trim() === "")
     throw fault("empty-file", "is empty", "write a header such as band,position and one band a line");
   if (format === "toml") return (await import("./read-toml.ts")).readToml(plain, source);
-  return (await import("./read-csv.ts")).readCsv(plain, source, format === "tsv" ? "\t" : ",");
+  return (await import("./read-csv.ts")).readCsv(plain, source, format === "tsv" ? "\t" : ",", labelled);
 }

@@ -1,4 +1,5 @@
 import {
+  assignFlags,
   bandFlags,
   commonFlags,
   convertFlags,
@@ -56,6 +57,17 @@ export const catalogue: readonly Entry[] = [
       'rungwise predict --series "2885.98 5667.98 8346.78" --up-to 6 --hot 1',
     ],
     load: async () => (await import("./commands/predict.ts")).predictJob,
+  },
+  {
+    name: "assign",
+    summary: "label peaks of which only positions are known",
+    argument: "[FILE]",
+    groups: [{ title: "Peaks:", flags: assignFlags }, common],
+    examples: [
+      'rungwise assign --peaks "2886 5668 6120 8347 9900 10923" --sigma 1',
+      'rungwise assign --peaks "3600 3527 7035 6881 10306 10061" --ladders 2',
+    ],
+    load: async () => (await import("./commands/assign.ts")).assignJob,
   },
   {
     name: "convert",

@@ -156,3 +156,18 @@ export const convertFlags: readonly Flag[] = [
   { name: "to-medium", value: "MEDIUM", help: "of wavelengths wanted: vacuum or air (default vacuum)" },
   ...bandFlags.filter(({ name }) => ["unit", "medium", "air", "sigma"].includes(name)),
 ];
+
+export const assignFlags: readonly Flag[] = [
+  { name: "peaks", value: '"P1 P2 …"', help: "positions without labels, split by spaces, commas or newlines" },
+  { name: "ladders", value: "N", help: "1, or 2 for two kinds of bonds (default 1)" },
+  {
+    name: "limits",
+    value: '"…"',
+    help: 'what is plausible (default "omega=500..4500 ratio=0.002..0.04", ω in cm-1 and ωx/ω)',
+  },
+  { name: "expect", value: '"1-0 2900..3100"', help: "levels known to lie in a range, cm-1" },
+  { name: "up-to", value: "V", help: "highest level looked for (default 10)" },
+  ...bandFlags.filter(({ name }) =>
+    ["unit", "medium", "air", "sigma", "sigma-means", "laser", "format"].includes(name),
+  ),
+];

@@ -1,7 +1,7 @@
 import { readdirSync, readFileSync } from "node:fs";
 import { Ajv2020 } from "ajv/dist/2020.js";
 import { describe, expect, it } from "vitest";
-import { check, convert, fit, predict, report } from "../../src/index.ts";
+import { assign, check, convert, fit, predict, report } from "../../src/index.ts";
 
 /** Every schema of docs/schema, strict: an unknown keyword or a reference that leads nowhere is an error. */
 function schemas() {
@@ -48,6 +48,11 @@ describe("the schemas describe every key of the documents, and no document has a
   it("predict", async () => {
     expect(faults("predict", await predict({ ...hcl, hot: 1 }))).toEqual([]);
     expect(faults("predict", await predict({ constants: "we=2990.95(1) wexe=52.82(1)" }))).toEqual([]);
+  });
+
+  it("assign", async () => {
+    expect(faults("assign", await assign({ peaks: "2886 5668 6120 8347 8349.5", sigma: 3 }))).toEqual([]);
+    expect(faults("assign", await assign({ peaks: "3600 3527 7035 6881 10306 10061", ladders: 2 }))).toEqual([]);
   });
 
   it("convert", () => {

@@ -1,3 +1,4 @@
+export { renderAssignment } from "./render-assignment.ts";
 export { renderCheck } from "./render-check.ts";
 export { renderConversion } from "./render-conversion.ts";
 export { renderDatasets } from "./render-datasets.ts";
