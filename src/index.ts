@@ -13,6 +13,7 @@ export { type CheckDocument, type CheckRequest, check, type Difference } from ".
 export { type ConvertDocument, type ConvertRequest, convert } from "./commands/convert.ts";
 export { fit } from "./commands/fit.ts";
 export { fitNonlinear, type NonlinearRequest, type NonlinearResult } from "./commands/fit-nonlinear.ts";
+export { type PlanDocument, type PlanRequest, plan } from "./commands/plan.ts";
 export { type PredictDocument, type PredictRequest, predict } from "./commands/predict.ts";
 export { type Report, type ReportFile, type ReportRequest, report } from "./commands/report.ts";
 export type { FitRequest, InputText } from "./commands/request.ts";

@@ -29,13 +29,9 @@ const LEVELS_BEYOND = 3;
  * Throws InputError with exit 3 when the bands do not determine the constants.
  */
 export function analyse(measured: Series, model: Model, given: AnalysisOptions): SeriesResult {
-  const { series, warnings: aboutMixture } = withMixture(measured, model, given);
+  const { solution, choice, warnings: aboutMixture } = solutionOf(measured, model, given);
+  const { series, options, fit, by, linear } = solution;
   const reducedMass = series.bond?.reducedMass ?? null;
-  const asked = model.limit === undefined ? given : { ...given, reducedMass };
-  const choice = wantsChoice(series, model, asked) ? chooseTerms(series, model, asked) : null;
-  const options = choice === null ? asked : { ...asked, terms: choice.terms };
-  const solution = solve(series, model, options);
-  const { fit, by, linear } = solution;
   const p = fit.values;
   const { parameters } = model.prepare([], options);
   const free = solution.stated.keys.flatMap((key, k) => (options.fixed[key]?.sigma === null ? [] : [k]));
@@ -86,6 +82,16 @@ export function analyse(measured: Series, model: Model, given: AnalysisOptions):
       ...heat.warnings,
     ],
   });
+}
+
+/** The fit of a series as it was measured: natural mixtures in the errors, and the number of terms chosen where that is asked for. */
+export function solutionOf(measured: Series, model: Model, given: AnalysisOptions) {
+  const { series, warnings } = withMixture(measured, model, given);
+  const reducedMass = series.bond?.reducedMass ?? null;
+  const asked = model.limit === undefined ? given : { ...given, reducedMass };
+  const choice = wantsChoice(series, model, asked) ? chooseTerms(series, model, asked) : null;
+  const options = choice === null ? asked : { ...asked, terms: choice.terms };
+  return { solution: solve(series, model, options), choice, warnings };
 }
 
 const LINEAR_METHOD = "generalised least squares on the band positions, Householder QR on scaled columns";

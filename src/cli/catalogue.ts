@@ -6,6 +6,7 @@ import {
   type Flag,
   fitFlags,
   moleculeFlags,
+  planFlags,
   predictFlags,
   reportFlags,
 } from "./flags.ts";
@@ -68,6 +69,17 @@ export const catalogue: readonly Entry[] = [
       'rungwise assign --peaks "3600 3527 7035 6881 10306 10061" --ladders 2',
     ],
     load: async () => (await import("./commands/assign.ts")).assignJob,
+  },
+  {
+    name: "plan",
+    summary: "which band to measure next, and where to look for it",
+    argument: "[FILE]",
+    groups: [{ title: "Plan:", flags: planFlags }, bands, molecule, fitting, common],
+    examples: [
+      'rungwise plan --series "2885.98 5667.98" --sigma 0.02 --aim wexe',
+      'rungwise plan --series "2885.98 5667.98" --sigma 0.02 --aim d0 --up-to 7',
+    ],
+    load: async () => (await import("./commands/plan.ts")).planJob,
   },
   {
     name: "convert",

@@ -171,3 +171,18 @@ export const assignFlags: readonly Flag[] = [
     ["unit", "medium", "air", "sigma", "sigma-means", "laser", "format"].includes(name),
   ),
 ];
+
+export const planFlags: readonly Flag[] = [
+  { name: "aim", value: "WHAT", help: "what is to become better known: we, wexe, weye, d0, prediction:7-0 or model" },
+  {
+    name: "sigma-new",
+    value: "U",
+    help: "standard uncertainty of the new band, 0.02 or 0.01 nm (default the median stated)",
+  },
+  {
+    name: "window",
+    value: '"600..900 nm"',
+    help: "where lasers and detectors reach, vacuum; several by commas (default everywhere)",
+  },
+  { name: "hot", value: "V", help: "also bands that start from levels up to V (default 0)" },
+];

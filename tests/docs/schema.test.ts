@@ -1,7 +1,7 @@
 import { readdirSync, readFileSync } from "node:fs";
 import { Ajv2020 } from "ajv/dist/2020.js";
 import { describe, expect, it } from "vitest";
-import { assign, check, convert, fit, predict, report } from "../../src/index.ts";
+import { assign, check, convert, fit, plan, predict, report } from "../../src/index.ts";
 
 /** Every schema of docs/schema, strict: an unknown keyword or a reference that leads nowhere is an error. */
 function schemas() {
@@ -53,6 +53,11 @@ describe("the schemas describe every key of the documents, and no document has a
   it("assign", async () => {
     expect(faults("assign", await assign({ peaks: "2886 5668 6120 8347 8349.5", sigma: 3 }))).toEqual([]);
     expect(faults("assign", await assign({ peaks: "3600 3527 7035 6881 10306 10061", ladders: 2 }))).toEqual([]);
+  });
+
+  it("plan", async () => {
+    expect(faults("plan", await plan({ ...hcl, aim: "d0", window: "600..4000 nm" }))).toEqual([]);
+    expect(faults("plan", await plan({ ...hcl, terms: 2, aim: "model" }))).toEqual([]);
   });
 
   it("convert", () => {

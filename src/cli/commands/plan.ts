@@ -1,0 +1,18 @@
+import { type PlanRequest, plan } from "../../commands/plan.ts";
+import { EXIT } from "../../messages/index.ts";
+import { renderPlan } from "../../reporting/terminal/index.ts";
+import type { Job } from "../job.ts";
+import { requestOf, textOption } from "../request-of.ts";
+import { tell } from "../tell.ts";
+
+/** `rungwise plan` */
+export const planJob: Job = async (asked, console) => {
+  const hot = textOption(asked.options.hot);
+  const document = await plan({ ...(requestOf(asked) as PlanRequest), ...(hot === undefined ? {} : { hot }) });
+  if (asked.options.json === true) {
+    const { renderJson } = await import("../../reporting/json.ts");
+    console.out(renderJson(document));
+  } else console.out(renderPlan(document, { colour: console.colourOut }));
+  tell({ warnings: document.warnings }, console);
+  return EXIT.done;
+};
