@@ -101,6 +101,10 @@ builds.push(
     plugins: [canvasStandIn, tables],
   }),
 );
+// The bundler escapes all but regular expressions; ASCII alone can be read without decoding.
+const script = readFileSync("dist/command.cjs", "utf8");
+const escaped = (character) => `\\u${character.charCodeAt(0).toString(16).padStart(4, "0")}`;
+writeFileSync("dist/command.cjs", script.replace(/[^\0-\x7f]/g, escaped));
 copyFileSync(".ci/start.cjs", "dist/rungwise.cjs");
 chmodSync("dist/rungwise.cjs", 0o755);
 

@@ -10,7 +10,7 @@ const cache = `${__dirname}/command.cache`;
 
 /** The bundle as a function of the usual five variables of a CommonJS module. */
 function compile(cachedData) {
-  // The bundler escapes whatever is not ASCII; read so, the text needs no decoding.
+  // The build escapes whatever is not ASCII; read so, the text needs no decoding.
   const source = readFileSync(file, "latin1");
   const wrapped = `(function(exports,require,module,__filename,__dirname){${source}\n})`;
   return new Script(wrapped, { filename: file, ...(cachedData === null ? {} : { cachedData }) });

@@ -11,6 +11,11 @@ export type {
 export { type AssignDocument, type AssignRequest, assign } from "./commands/assign.ts";
 export { type CheckDocument, type CheckRequest, check, type Difference } from "./commands/check.ts";
 export { type ConvertDocument, type ConvertRequest, convert } from "./commands/convert.ts";
+export {
+  type ConvertConstantsDocument,
+  type ConvertConstantsRequest,
+  convertConstants,
+} from "./commands/convert-constants.ts";
 export { fit } from "./commands/fit.ts";
 export { fitNonlinear, type NonlinearRequest, type NonlinearResult } from "./commands/fit-nonlinear.ts";
 export { type PlanDocument, type PlanRequest, plan } from "./commands/plan.ts";

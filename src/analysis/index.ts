@@ -1,5 +1,6 @@
 export { analyse } from "./analyse.ts";
 export { type Assignment, assignPeaks } from "./assign/assign.ts";
+export { changeForm, type Form, forms } from "./forms/forms.ts";
 export { labelsWithin } from "./near-limit/levels.ts";
 export type { AnalysisOptions, ExcessKind, IntervalKind } from "./options.ts";
 export { type Aim, type Plan, type PlanOptions, planNext } from "./plan/plan.ts";

@@ -83,12 +83,13 @@ export const catalogue: readonly Entry[] = [
   },
   {
     name: "convert",
-    summary: "positions from one unit or medium to another",
-    argument: "<VALUE...>",
+    summary: "positions to another unit or medium, constants to another form",
+    argument: "[VALUE...]",
     groups: [{ title: "Conversion:", flags: convertFlags }, common],
     examples: [
       "rungwise convert 1197.7 745.286(10) --unit nm --medium air --to cm-1",
       'rungwise convert "8347.05(7)" --to nm --to-medium air',
+      'rungwise convert --constants "we=2990.9(1) wexe=52.8(1)" --to polynomial',
     ],
     load: async () => (await import("./commands/convert.ts")).convertJob,
   },

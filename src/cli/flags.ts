@@ -148,11 +148,22 @@ export const predictFlags: readonly Flag[] = [
     value: '"we=… wexe=…"',
     help: "constants in place of bands, such as we=2990.95(1) wexe=52.82(1)",
   },
+  { name: "correlation", value: '"R12 …"', help: "of those constants, row by row above the diagonal" },
   { name: "hot", value: "V", help: "also bands that start from levels up to V (default 0)" },
 ];
 
 export const convertFlags: readonly Flag[] = [
-  { name: "to", value: "UNIT", help: "unit wanted (required)" },
+  {
+    name: "to",
+    value: "UNIT|FORM",
+    help: "unit wanted, or form of constants: equilibrium, local, polynomial, position-plot, spacing-plot (required)",
+  },
+  {
+    name: "constants",
+    value: '"we=… wexe=…"',
+    help: "constants in place of positions; keys say the form: we …, w …, c1 …, a0 … or b0 …",
+  },
+  { name: "correlation", value: '"R12 …"', help: "of those constants, row by row above the diagonal" },
   { name: "to-medium", value: "MEDIUM", help: "of wavelengths wanted: vacuum or air (default vacuum)" },
   ...bandFlags.filter(({ name }) => ["unit", "medium", "air", "sigma"].includes(name)),
 ];

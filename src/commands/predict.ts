@@ -10,9 +10,11 @@ import {
 import { type Fault, InputError, type Warning } from "../messages/index.ts";
 import type { Model } from "../models/index.ts";
 import { readMeasurement } from "../quantity/index.ts";
+import { readAssignments } from "./assignments.ts";
+import { readCorrelation } from "./correlation.ts";
 import { fitEach } from "./fit.ts";
 import { gather } from "./gather.ts";
-import { type ReadOptions, readAssignments, readOptions } from "./read-options.ts";
+import { type ReadOptions, readOptions } from "./read-options.ts";
 import { type FitRequest, requestSettings } from "./request.ts";
 import { tool } from "./tool.ts";
 
@@ -20,6 +22,8 @@ import { tool } from "./tool.ts";
 export interface PredictRequest extends FitRequest {
   /** such as "we=2990.95(1) wexe=52.82(1)"; stated uncertainties count as uncorrelated */
   readonly constants?: string;
+  /** correlations of those constants, row by row above the diagonal: r12, or r12 r13 r23 */
+  readonly correlation?: string | number;
   /** text of a result.json */
   readonly stored?: { readonly text: string; readonly source: string };
   /** also bands that start from levels up to this; @default 0 */
@@ -64,7 +68,7 @@ const DEFAULT_UP_TO = 6;
  * @throws InputError exit 2 for a wrong request, exit 3 when bands do not determine the constants
  */
 export async function predict(request: PredictRequest): Promise<PredictDocument> {
-  const { constants, stored, hot = 0, ...rest } = request;
+  const { constants, correlation, stored, hot = 0, ...rest } = request;
   const given = [constants, stored, request.series ?? request.bands ?? request.input].filter((x) => x !== undefined);
   if (given.length > 1)
     throw new InputError([
@@ -79,7 +83,7 @@ export async function predict(request: PredictRequest): Promise<PredictDocument>
     stored !== undefined
       ? await fromStored(stored, rest)
       : constants !== undefined
-        ? await fromConstants(constants, rest)
+        ? await fromConstants(constants, correlation, rest)
         : await fromBands(rest);
   const series = sources.map((source) => predictionsFrom(source, options, hot));
   return { schemaVersion: 1, tool, predictions: series[0]?.predictions ?? [], series, warnings: [] };
@@ -176,7 +180,11 @@ function isResult(x: unknown): x is SeriesResult {
   );
 }
 
-async function fromConstants(text: string, request: FitRequest): Promise<Prepared> {
+async function fromConstants(
+  text: string,
+  correlation: PredictRequest["correlation"],
+  request: FitRequest,
+): Promise<Prepared> {
   const options = checked(await readOptions(requestSettings(request)));
   const { constants } = options.model;
   if (options.model.well === undefined)
@@ -217,16 +225,22 @@ async function fromConstants(text: string, request: FitRequest): Promise<Prepare
     );
   if (faults.length > 0) throw new InputError(faults);
   const used = values.slice(0, Math.max(terms, least)).map((value) => value ?? 0);
-  const covariance = anyUncertain ? used.map((_, i) => used.map((_, j) => (i === j ? variances[i]! : 0))) : null;
-  const warnings: Warning[] = anyUncertain
-    ? [
-        {
-          code: "constants-uncorrelated",
-          message:
-            "the constants are taken as uncorrelated: fitted ωe and ωexe are strongly correlated, so these uncertainties are rough; predict from bands or a result.json where they exist",
-        },
-      ]
-    : [];
+  const r = readCorrelation(correlation, used.length);
+  const covariance = anyUncertain
+    ? used.map((_, i) =>
+        used.map((_, j) => (r?.[i]?.[j] ?? Number(i === j)) * Math.sqrt((variances[i] ?? 0) * (variances[j] ?? 0))),
+      )
+    : null;
+  const warnings: Warning[] =
+    anyUncertain && r === null
+      ? [
+          {
+            code: "constants-uncorrelated",
+            message:
+              "the constants are taken as uncorrelated: fitted ωe and ωexe are strongly correlated, so these uncertainties are rough; predict from bands or a result.json where they exist",
+          },
+        ]
+      : [];
   return {
     sources: [
       {

@@ -13,6 +13,7 @@ import {
   standardAir,
   toWavenumber,
 } from "../quantity/index.ts";
+import { readAssignments } from "./assignments.ts";
 
 /** The settings about the fit, read and checked. */
 export interface ReadOptions {
@@ -220,16 +221,4 @@ function readFixed(reader: Reader, model: Model): Readonly<Record<string, Fixed>
     if (setting !== undefined) read(setting, key, setting.value, OWN_SETTINGS[name]!);
   }
   return fixed;
-}
-
-/** `we=2990.9(1) wexe = 52.8` as pairs; commas and semicolons may stand between them. A word without `=` has the value null. */
-export function readAssignments(text: string): { key: string; value: string | null }[] {
-  return text
-    .replace(/\s*=\s*/g, "=")
-    .split(/[\s,;]+/)
-    .filter((word) => word !== "")
-    .map((word) => {
-      const at = word.indexOf("=");
-      return at < 0 ? { key: word, value: null } : { key: word.slice(0, at), value: word.slice(at + 1) };
-    });
 }

@@ -101,3 +101,13 @@ describe("streams", () => {
     expect(rungwise(other).out).toBe(once);
   });
 });
+
+describe("the built command", () => {
+  it("keeps characters outside ASCII whole, in regular expressions too: minus signs stand under their digits", () => {
+    const { out } = rungwise(["convert", "--constants", "c1=2938.1(3) c2=-52.8(1)", "--to", "polynomial"]);
+    const lines = out.split("\n").filter((line) => /^ {2}c\d/.test(line));
+    expect(lines).toHaveLength(2);
+    expect(new Set(lines.map((line) => [...line].indexOf("."))).size).toBe(1);
+    expect(lines[1]).toContain("−52.80(10)");
+  });
+});

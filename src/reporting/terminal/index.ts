@@ -1,5 +1,6 @@
 export { renderAssignment } from "./render-assignment.ts";
 export { renderCheck } from "./render-check.ts";
+export { renderConstants } from "./render-constants.ts";
 export { renderConversion } from "./render-conversion.ts";
 export { renderDatasets } from "./render-datasets.ts";
 export { type FitTextOptions, renderFit } from "./render-fit.ts";
