@@ -12,6 +12,7 @@ export function fitWarnings(solution: Solution, termsChosen: boolean): Warning[]
     ...aboutTermsAndBands(solution, termsChosen),
     ...aboutRobust(solution),
     ...aboutMedium(solution),
+    ...aboutShared(solution),
   ];
 }
 
@@ -116,6 +117,19 @@ function aboutMedium(solution: Solution): Warning[] {
     {
       code: "medium-suspected",
       message: `χ² would fall from ${short(solution.stated.chiSquare)} to ${short(other.chiSquare)} if the wavelengths were in ${other.medium}: check what the instrument reports, and say --medium ${other.medium} if so`,
+    },
+  ];
+}
+
+/** Not a fault: what the other series say is an observation the reader does not see among the bands. */
+function aboutShared({ options: { shared } }: Solution): Warning[] {
+  if (shared === null) return [];
+  const { key, value, sigma, spread, from } = shared;
+  return [
+    {
+      code: "constant-shared",
+      message: `${key} is shared${spread > 0 ? ` within ${spread} cm-1` : ""}: ${from.join(", ")} put${from.length === 1 ? "s" : ""} it at ${short(value, 7)} ± ${short(sigma, 2)} cm-1, which counts as one more observation here; that holds if the bonds are alike`,
+      about: key,
     },
   ];
 }

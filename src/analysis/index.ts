@@ -1,5 +1,6 @@
 export { analyse } from "./analyse.ts";
 export { type Assignment, assignPeaks } from "./assign/assign.ts";
+export { compareAll, type GivenConstants } from "./compare.ts";
 export { changeForm, type Form, forms } from "./forms/forms.ts";
 export { labelsWithin } from "./near-limit/levels.ts";
 export type { AnalysisOptions, ExcessKind, IntervalKind } from "./options.ts";
@@ -7,4 +8,5 @@ export { type Aim, type Plan, type PlanOptions, planNext } from "./plan/plan.ts"
 export { predict } from "./predictions.ts";
 export type { Propagation } from "./propagation.ts";
 export type * from "./result.ts";
+export { type Share, shareConstant } from "./share.ts";
 export { turningPoint } from "./turning-point.ts";

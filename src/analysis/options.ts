@@ -1,9 +1,23 @@
-import type { RobustKind } from "../fitting/index.ts";
+import type { RobustKind, Treatment } from "../fitting/index.ts";
 import type { ModelOptions } from "../models/index.ts";
 import type { AirConditions } from "../quantity/index.ts";
 
 export type IntervalKind = "linear" | "profile" | "resample";
 export type ExcessKind = "scatter" | "birge" | "none";
+
+/** One constant in common with other series: `value` ± `sigma` is what they say of it, which `fixed` holds as an observation. */
+export interface SharedConstant {
+  readonly key: string;
+  readonly value: number;
+  readonly sigma: number;
+  readonly spread: number;
+  readonly from: readonly string[];
+  /** of the residuals of the joint fit */
+  readonly treatment: Treatment;
+  readonly excess: { readonly kind: ExcessKind; readonly value: number | null; readonly applied: boolean };
+  /** of the joint fit, where its treatment was estimated; otherwise null */
+  readonly degreesOfFreedom: number | null;
+}
 
 /** Everything `analyse` may be told beside the series and the model; nothing is optional here. */
 export interface AnalysisOptions extends ModelOptions {
@@ -29,6 +43,8 @@ export interface AnalysisOptions extends ModelOptions {
   readonly diatomic: boolean;
   /** an accepted ΔH°(298.15 K) in kJ/mol to compare with; null: none */
   readonly acceptedEnthalpy: { readonly value: number; readonly sigma: number | null } | null;
+  /** a constant that other series have a say in, and how the residuals of all of them are treated; null: none */
+  readonly shared: SharedConstant | null;
   /** rotational constants in cm-1, bond length in Å */
   readonly be: number | null;
   readonly alphaE: number | null;

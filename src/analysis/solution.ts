@@ -96,7 +96,7 @@ export function solve(series: Series, model: Model, options: AnalysisOptions): S
     probability,
     by: {
       covariance: excess.fit.covariance,
-      degreesOfFreedom: estimated ? dof : null,
+      degreesOfFreedom: options.shared !== null ? options.shared.degreesOfFreedom : estimated ? dof : null,
       coverage: options.coverage,
     },
   };
@@ -154,7 +154,7 @@ function determined<T>(series: Series, model: Model, used: readonly Band[], prob
   }
 }
 
-interface Treated {
+export interface Treated {
   readonly fit: LinearFit;
   readonly treatment: Treatment;
   readonly kind: "scatter" | "birge" | "none";
@@ -163,8 +163,18 @@ interface Treated {
   readonly weights: readonly number[] | null;
 }
 
-function treat(problem: Problem, stated: LinearFit, probability: number | null, options: AnalysisOptions): Treated {
+/** The treatment of residuals larger than σ that the options ask for, and the fit with it. */
+export function treat(
+  problem: Problem,
+  stated: LinearFit,
+  probability: number | null,
+  options: AnalysisOptions,
+): Treated {
   const none = { kind: "none", value: null, applied: false, weights: null } as const;
+  if (options.shared !== null) {
+    const { treatment, excess } = options.shared;
+    return { ...excess, weights: null, treatment, fit: excess.applied ? fitLinear(problem, treatment) : stated };
+  }
   if (options.robust !== null) return { ...none, ...fitRobust(problem, options.robust) };
   const treated = (treatment: Treatment, kind: "scatter" | "birge", value: number): Treated => ({
     fit: fitLinear(problem, treatment),

@@ -53,6 +53,9 @@ export const settingNames: readonly string[] = [
   "limits",
   "expect",
   "robust",
+  "share",
+  "compare",
+  "correlation",
   "notation",
   "up-to",
 ];

@@ -110,6 +110,17 @@ export const fitFlags: readonly Flag[] = [
     help: "hold constants; with an uncertainty, weye=0.22(1), it is one more observation",
   },
   {
+    name: "share",
+    value: "KEY",
+    help: 'constant common to all series, such as wexe, or "wexe±0.5": alike to 0.5 cm-1',
+  },
+  {
+    name: "compare",
+    value: '"we=… wexe=…"',
+    help: "constants from elsewhere: differences, with their significance (--correlation: of those constants)",
+  },
+  { name: "correlation", value: '"R12 …"', help: "of constants given, row by row above the diagonal" },
+  {
     name: "excess",
     value: "KIND",
     help: "residuals larger than σ: add a scatter, multiply σ (birge), or none (default scatter)",
@@ -148,7 +159,6 @@ export const predictFlags: readonly Flag[] = [
     value: '"we=… wexe=…"',
     help: "constants in place of bands, such as we=2990.95(1) wexe=52.82(1)",
   },
-  { name: "correlation", value: '"R12 …"', help: "of those constants, row by row above the diagonal" },
   { name: "hot", value: "V", help: "also bands that start from levels up to V (default 0)" },
 ];
 

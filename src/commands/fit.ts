@@ -1,4 +1,4 @@
-import { analyse, type FitDocument, type SeriesResult } from "../analysis/index.ts";
+import { analyse, compareAll, type FitDocument, type SeriesResult } from "../analysis/index.ts";
 import type { Series } from "../bands/index.ts";
 import { InputError } from "../messages/index.ts";
 import { type Gathered, gather } from "./gather.ts";
@@ -16,8 +16,8 @@ export async function fit(request: FitRequest): Promise<FitDocument> {
 }
 
 /** The results one after the other, so that long files need not be held whole. */
-export function* fitEach({ series, options }: Gathered): Generator<SeriesResult> {
-  for (const one of series) yield named(one, () => analyse(one, options.model, options.analysis));
+export function* fitEach({ series, options, optionsOf }: Gathered): Generator<SeriesResult> {
+  for (const one of series) yield named(one, () => analyse(one, options.model, optionsOf(one)));
 }
 
 /** Everything of the document but the series. */
@@ -30,6 +30,7 @@ export async function documentHead(gathered: Gathered, request: FitRequest): Pro
     ),
     input: request.input === undefined ? null : await identify(request.input.source, request.input.text),
     warnings: gathered.warnings,
+    comparisons: compareAll(gathered.series, gathered.options.model, gathered.optionsOf, gathered.given),
   };
 }
 

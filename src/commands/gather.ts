@@ -1,3 +1,4 @@
+import { type AnalysisOptions, type GivenConstants, shareConstant } from "../analysis/index.ts";
 import {
   mergeSettings,
   readInput,
@@ -10,6 +11,7 @@ import {
 } from "../bands/index.ts";
 import { loadNonlinearCore } from "../fitting/index.ts";
 import { type Fault, formatFault, InputError, type Warning } from "../messages/index.ts";
+import { readGiven, readShare } from "./read-comparison.ts";
 import { type ReadOptions, readOptions } from "./read-options.ts";
 import { type FitRequest, requestSettings } from "./request.ts";
 
@@ -18,6 +20,10 @@ export interface Gathered {
   readonly settings: Settings;
   readonly series: readonly Series[];
   readonly options: ReadOptions;
+  /** of one series, where a constant is shared; otherwise those of `options` */
+  readonly optionsOf: (one: Series) => AnalysisOptions;
+  /** constants to compare with */
+  readonly given: GivenConstants | null;
   readonly warnings: readonly Warning[];
 }
 
@@ -41,7 +47,16 @@ export async function gather(request: FitRequest): Promise<Gathered> {
   if (options !== null && (options.analysis.intervals === "profile" || options.model.starts !== undefined))
     await loadNonlinearCore();
   if (wrong.length > 0 || options === null || result === null) throw new InputError(distinct(wrong));
-  return { settings, series: result.series, options, warnings: result.warnings };
+  const share = readShare(settings);
+  const each = share === null ? null : shareConstant(result.series, options.model, options.analysis, share);
+  return {
+    settings,
+    series: result.series,
+    options,
+    optionsOf: (one) => each?.get(one) ?? options.analysis,
+    given: readGiven(settings, options.model),
+    warnings: result.warnings,
+  };
 }
 
 function bandsOf(settings: Settings, flags: Settings, file: Awaited<ReturnType<typeof readInput>> | null): Understood {

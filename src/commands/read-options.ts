@@ -84,6 +84,7 @@ export async function readOptions(
     excess: reader.choice<ExcessKind>("excess", ["scatter", "birge", "none"], "scatter"),
     scatter: reader.number("scatter", positive, "write the added scatter in cm-1, such as 0.3"),
     coverage: reader.number("coverage", (x) => x > 0 && x < 1, "write a probability between 0 and 1, such as 0.99"),
+    shared: null,
     groups: reader.choice("groups", ["carried", "fitted"], "carried"),
     robust: settings.has("robust") ? reader.choice<RobustKind>("robust", ["tukey", "huber"], "tukey") : null,
     intervals: reader.choice<IntervalKind>("intervals", ["linear", "profile", "resample"], "linear"),

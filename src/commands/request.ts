@@ -57,6 +57,12 @@ export interface FitRequest {
   readonly limit?: Word;
   /** constants held, such as "weye=0.22"; with an uncertainty one more observation */
   readonly fix?: string;
+  /** a constant common to all series, "wexe", or alike within a standard deviation, "wexe±0.5" */
+  readonly share?: string;
+  /** constants from elsewhere to compare with, such as "we=2990.9463(5) wexe=52.8186(9)" */
+  readonly compare?: string;
+  /** correlations of the constants of `compare`, row by row above the diagonal */
+  readonly correlation?: Word;
   /** rotational constants in cm-1, bond length in Å */
   readonly be?: Word;
   readonly alphaE?: Word;

@@ -21,6 +21,7 @@ export const defaults: AnalysisOptions = {
   scatter: null,
   robust: null,
   groups: "carried",
+  shared: null,
   diatomic: false,
   acceptedEnthalpy: null,
   coverage: null,

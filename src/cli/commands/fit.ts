@@ -1,4 +1,4 @@
-import type { SeriesResult } from "../../analysis/index.ts";
+import type { FitDocument, SeriesResult } from "../../analysis/index.ts";
 import { documentHead, fitEach } from "../../commands/fit.ts";
 import { type Gathered, gather } from "../../commands/gather.ts";
 import { EXIT, type Warning } from "../../messages/index.ts";
@@ -23,7 +23,7 @@ export const fitJob: Job = async (asked, console) => {
       console.out(piece);
       await console.settled();
     }
-  } else await print(gathered, results, told, console);
+  } else await print(gathered, head.comparisons, results, told, console);
   tell({ warnings: head.warnings, series: told }, console);
   return EXIT.done;
 };
@@ -41,17 +41,18 @@ function* noting(
 
 async function print(
   { options: { notation, symbols } }: Gathered,
+  comparisons: FitDocument["comparisons"],
   results: Iterable<SeriesResult>,
   told: { name: string; warnings: readonly Warning[] }[],
   console: Console,
 ): Promise<void> {
   const options = { colour: console.colourOut, notation, quiet: console.quiet, symbols };
   if (Array.isArray(results)) {
-    console.out(renderFit({ series: [...noting(results, told)] }, options));
+    console.out(renderFit({ series: [...noting(results, told)], comparisons }, options));
     return;
   }
   for (const result of noting(results, told)) {
-    console.out(`${renderFit({ series: [result] }, options)}\n`);
+    console.out(`${renderFit({ series: [result], comparisons: [] }, options)}\n`);
     await console.settled();
   }
 }

@@ -9,6 +9,7 @@ import {
   constantsTable,
   correlation,
   derivedTable,
+  differencesTable,
   dissociationComparison,
   dissociationTable,
   LASER_LINE,
@@ -51,11 +52,13 @@ export function renderReport(document: FitDocument, options: ReportOptions): str
   const each = (write: (one: SeriesResult) => string) => perSeries(series, write);
   const side = (write: (all: readonly SeriesResult[]) => TableData) =>
     series.length > 1 ? [table(write(series))] : [];
+  const differences = differencesTable(document.comparisons, symbols);
   const parts: readonly (readonly [string, readonly string[]])[] = [
     ["Summary", series.map((one) => summary(one, symbols))],
     ["Bands as read and as used", each(bandsAsRead)],
     ["Excluded bands", each(excludedBands)],
     ["Constants", [...side((all) => constantsComparison(all, symbols)), ...each((one) => constantsPart(one, symbols))]],
+    ["Differences", differences === null ? [] : [table(differences)]],
     ["Observed − calculated", each((one) => table(bandsTable(one)))],
     ["Errors in common", tablesOf(series, commonErrorsTable)],
     [

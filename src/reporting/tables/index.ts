@@ -3,6 +3,7 @@ export { commonErrorsTable } from "./common-errors.ts";
 export { constantsComparison, dissociationComparison, termsTable } from "./comparison.ts";
 export { constantsTable, correlation } from "./constants.ts";
 export { derivedTable } from "./derived.ts";
+export { differencesTable } from "./differences.ts";
 export { dissociationTable, SAFETY_LINE } from "./dissociation.ts";
 export { LASER_LINE, predictionsTable } from "./predictions.ts";
 export { qualityEntries } from "./quality.ts";
