@@ -4,6 +4,7 @@ import { oscillator } from "./oscillator.ts";
 /** Every model, one line each; those that are not the default are imported only when asked for. */
 const models: Readonly<Record<string, () => Promise<Model> | Model>> = {
   oscillator: () => oscillator,
+  coupled: async () => (await import("./coupled/index.ts")).coupled,
   "near-limit": async () => (await import("./near-limit/index.ts")).nearLimit,
 };
 

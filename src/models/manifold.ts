@@ -1,11 +1,11 @@
 /** A basis state and its part in a level; weights of one level add to 1. */
-interface Part {
+export interface Part {
   readonly state: string;
   readonly weight: number;
 }
 
 /** A level of a model whose states mix, cm-1 above the ground state; a degenerate level stands once. */
-interface MixedLevel {
+export interface MixedLevel {
   readonly label: string;
   /** what stays good while states mix: total quanta V and species, or polyad number N, l and j; keys as in the JSON document */
   readonly numbers: Readonly<Record<string, number | string>>;
@@ -20,7 +20,7 @@ interface MixedLevel {
 }
 
 /** A number that follows from the constants, such as a splitting or a constant in other conventions. */
-interface Consequence {
+export interface Consequence {
   readonly key: string;
   readonly symbol: string;
   readonly unit: string;

@@ -19,6 +19,10 @@ export interface ModelOptions {
   readonly fixed: Readonly<Record<string, Fixed>>;
   /** n of the long-range potential -C_n/rⁿ, for models that ask for it */
   readonly power?: number | null;
+  /** how many equivalent bonds, or two unlike ones */
+  readonly bonds?: number | "unlike" | null;
+  /** whether a cross anharmonicity between bonds is fitted too */
+  readonly cross?: boolean;
   /** of the series, in u; put there by the analysis */
   readonly reducedMass?: number | null;
 }
@@ -54,6 +58,8 @@ export interface ConstantInfo {
 export interface OwnSettings {
   /** those it cannot do without */
   readonly required: readonly string[];
+  /** all of them that are no constants; @default those required */
+  readonly own?: readonly string[];
   /** those that give a constant: the same as `--fix` with that key */
   readonly constants: Readonly<Record<string, string>>;
 }

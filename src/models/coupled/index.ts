@@ -1,0 +1,1 @@
+export { coupled } from "./coupled.ts";
