@@ -9,6 +9,7 @@ import { derivedNumbers, highestLevel } from "./derived.ts";
 import { dissociationRows } from "./dissociation/rows.ts";
 import { withEmpirical } from "./empirical/with-empirical.ts";
 import { fitWarnings } from "./fit-warnings.ts";
+import { followManifold } from "./follow-manifold.ts";
 import { refineIntervals } from "./intervals.ts";
 import { withMixture } from "./mixture.ts";
 import { followLimit } from "./near-limit/follow-limit.ts";
@@ -99,19 +100,36 @@ const NONLINEAR_METHOD =
   "generalised least squares on the band positions, damped Gauss-Newton steps (Levenberg-Marquardt), Householder QR for the last ones";
 
 /** What a model lets one conclude beyond its constants. `first`: warnings that are headlines. */
-type Follows = Pick<SeriesResult, "dissociation" | "derived" | "predictions" | "stability" | "warnings"> & {
+type Follows = Pick<
+  SeriesResult,
+  "dissociation" | "derived" | "predictions" | "stability" | "levels" | "consequences" | "deperturbation" | "warnings"
+> & {
   readonly first: readonly Warning[];
 };
 
 /** The model is asked what it can do: a well, a law of the limit, or constants alone. */
 function whatFollows(solution: Solution): Follows {
   const { model, fit } = solution;
-  const none = { dissociation: [], derived: null, predictions: [], stability: [], warnings: [], first: [] };
+  const none = {
+    dissociation: [],
+    derived: null,
+    predictions: [],
+    stability: [],
+    levels: null,
+    consequences: [],
+    deperturbation: null,
+    warnings: [],
+    first: [],
+  };
+  if (model.manifold !== undefined) return { ...none, ...followManifold(solution, model.manifold(solution.options)) };
   if (model.well !== undefined) return { ...none, ...followWell(solution, model.well(fit.values)) };
   return model.limit === undefined ? none : { ...none, ...followLimit(solution, model.limit) };
 }
 
-function followWell(solution: Solution, well: Well): Omit<Follows, "first"> {
+function followWell(
+  solution: Solution,
+  well: Well,
+): Omit<Follows, "first" | "levels" | "consequences" | "deperturbation"> {
   const { series, model, options, fit, by } = solution;
   const p = fit.values;
   const reducedMass = series.bond?.reducedMass ?? null;

@@ -1,6 +1,7 @@
 export { analyse } from "./analyse.ts";
 export { type Assignment, assignPeaks } from "./assign/assign.ts";
 export { compareAll, type GivenConstants } from "./compare.ts";
+export { manifoldAt } from "./follow-manifold.ts";
 export { changeForm, type Form, forms } from "./forms/forms.ts";
 export { labelsWithin } from "./near-limit/levels.ts";
 export type { AnalysisOptions, ExcessKind, IntervalKind } from "./options.ts";

@@ -136,6 +136,47 @@ export interface Derived {
   readonly spacingPlotSlope: Quantity;
 }
 
+/** A level of a model whose states mix; cm-1 above the ground state. A degenerate level stands once. */
+export interface LevelResult {
+  readonly label: string;
+  /** total quanta and species of coupled bonds */
+  readonly V?: number;
+  readonly species?: string;
+  /** polyad number, angular momentum of the bend, and place from the highest level down */
+  readonly N?: number;
+  readonly l?: number;
+  readonly j?: number;
+  readonly degeneracy: number;
+  readonly energy: number;
+  readonly standardUncertainty: number | null;
+  /** of the local state that names the level */
+  readonly weight?: number;
+  /** of the pure stretch, which carries the intensity */
+  readonly stretchShare?: number;
+  readonly composition: readonly { readonly state: string; readonly weight: number }[];
+}
+
+/** A number that follows from constants of such a model. */
+export interface ConsequenceResult {
+  readonly key: string;
+  readonly symbol: string;
+  readonly quantity: Quantity | null;
+  readonly note: string | null;
+}
+
+/** Pure overtones of a polyad beside the level that a reader would take for each, and the local-mode constants either gives. */
+export interface Deperturbation {
+  readonly overtones: readonly {
+    readonly v: number;
+    readonly deperturbed: Quantity;
+    readonly strongest: { readonly label: string; readonly energy: number; readonly share: number };
+  }[];
+  /** ω̃ and ω̃x, cm-1 */
+  readonly constants: { readonly w: Quantity; readonly wx: Quantity };
+  /** the same from the strongest levels read as overtones; null for fewer than two */
+  readonly naive: { readonly w: number; readonly wx: number } | null;
+}
+
 /** D0 as an enthalpy of dissociation at 298.15 K, of a bond that is a whole molecule; kJ/mol. */
 export interface Thermochemistry {
   /** K */
@@ -199,6 +240,11 @@ export interface SeriesResult {
   /** with --terms auto: the numbers of terms compared; otherwise null */
   readonly comparison: readonly ComparisonRow[] | null;
   readonly commonErrors: readonly CommonError[];
+  /** of models whose states mix; null for others */
+  readonly levels: readonly LevelResult[] | null;
+  readonly consequences: readonly ConsequenceResult[];
+  /** of polyads; null for other models */
+  readonly deperturbation: Deperturbation | null;
   /** null: intervals to first order */
   readonly intervals: IntervalRecord | null;
   readonly fitReport: {

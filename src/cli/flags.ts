@@ -90,8 +90,11 @@ export const fitFlags: readonly Flag[] = [
   {
     name: "model",
     value: "NAME",
-    help: "oscillator (default) or near-limit: levels close under the limit, v-0 above v = 0 of their own electronic state",
+    help: "oscillator (default); near-limit: levels close under the limit, v-0 above v = 0 of their own electronic state; coupled: equivalent or two unlike X-H bonds; polyad: a stretch and its bend",
   },
+  { name: "bonds", value: "N", help: "coupled: 2, 3 or 4 equivalent bonds, or unlike for two different ones" },
+  { name: "cross", value: null, help: "coupled: also fit the cross anharmonicity wxcross" },
+  { name: "bend", value: "KIND", help: "polyad: degenerate or single bend (default degenerate)" },
   {
     name: "power",
     value: "N",
@@ -159,6 +162,7 @@ export const predictFlags: readonly Flag[] = [
     value: '"we=… wexe=…"',
     help: "constants in place of bands, such as we=2990.95(1) wexe=52.82(1)",
   },
+  { name: "predict-bond", value: '"O D"', help: "coupled: the same bonds with another isotope, by mass scaling" },
   { name: "hot", value: "V", help: "also bands that start from levels up to V (default 0)" },
 ];
 

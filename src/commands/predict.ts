@@ -1,6 +1,8 @@
 import {
   type FitDocument,
+  type LevelResult,
   labelsWithin,
+  manifoldAt,
   type Prediction,
   type Propagation,
   predict as predictBands,
@@ -8,8 +10,9 @@ import {
   turningPoint,
 } from "../analysis/index.ts";
 import { type Fault, InputError, type Warning } from "../messages/index.ts";
-import type { Model } from "../models/index.ts";
+import type { Manifold, Model } from "../models/index.ts";
 import { readMeasurement } from "../quantity/index.ts";
+import { readBond } from "../species/index.ts";
 import { readAssignments } from "./assignments.ts";
 import { readCorrelation } from "./correlation.ts";
 import { fitEach } from "./fit.ts";
@@ -28,20 +31,25 @@ export interface PredictRequest extends FitRequest {
   readonly stored?: { readonly text: string; readonly source: string };
   /** also bands that start from levels up to this; @default 0 */
   readonly hot?: number;
+  /** coupled bonds: the same bonds with another isotope, such as "O D", by mass scaling */
+  readonly predictBond?: string;
 }
 
 /** The predictions of one series. */
 export interface SeriesPredictions {
   readonly name: string;
   readonly predictions: readonly Prediction[];
+  /** of models whose states mix; null for others */
+  readonly levels: readonly LevelResult[] | null;
   readonly warnings: readonly Warning[];
 }
 
-/** The document of `predict`; `predictions` are those of the first series. */
+/** The document of `predict`; `predictions` and `levels` are those of the first series. */
 export interface PredictDocument {
   readonly schemaVersion: 1;
   readonly tool: { readonly name: string; readonly version: string };
   readonly predictions: readonly Prediction[];
+  readonly levels: readonly LevelResult[] | null;
   readonly series: readonly SeriesPredictions[];
   readonly warnings: readonly Warning[];
 }
@@ -68,7 +76,7 @@ const DEFAULT_UP_TO = 6;
  * @throws InputError exit 2 for a wrong request, exit 3 when bands do not determine the constants
  */
 export async function predict(request: PredictRequest): Promise<PredictDocument> {
-  const { constants, correlation, stored, hot = 0, ...rest } = request;
+  const { constants, correlation, stored, hot = 0, predictBond, ...rest } = request;
   const given = [constants, stored, request.series ?? request.bands ?? request.input].filter((x) => x !== undefined);
   if (given.length > 1)
     throw new InputError([
@@ -85,15 +93,36 @@ export async function predict(request: PredictRequest): Promise<PredictDocument>
       : constants !== undefined
         ? await fromConstants(constants, correlation, rest)
         : await fromBands(rest);
-  const series = sources.map((source) => predictionsFrom(source, options, hot));
-  return { schemaVersion: 1, tool, predictions: series[0]?.predictions ?? [], series, warnings: [] };
+  if (predictBond !== undefined && options.model.manifold === undefined)
+    throw new InputError([
+      {
+        code: "predict-bond",
+        place: { source: "--predict-bond" },
+        what: `the model ${options.model.name} predicts no other bond`,
+        mend: "leave it out, or name a model of coupled bonds: --model coupled",
+      },
+    ]);
+  const series = sources.map((source) =>
+    options.model.manifold === undefined
+      ? predictionsFrom(source, options, hot)
+      : levelsFrom(source, options, predictBond ?? null),
+  );
+  const [first] = series;
+  return {
+    schemaVersion: 1,
+    tool,
+    predictions: first?.predictions ?? [],
+    levels: first?.levels ?? null,
+    series,
+    warnings: [],
+  };
 }
 
 type Prepared = { readonly sources: readonly Source[]; readonly options: ReadOptions };
 
 function predictionsFrom(source: Source, { model, analysis }: ReadOptions, hot: number): SeriesPredictions {
   const { values, by } = source;
-  if (source.refused) return { name: source.name, predictions: [], warnings: source.warnings };
+  if (source.refused) return { name: source.name, predictions: [], levels: null, warnings: source.warnings };
   const terms = values.length;
   const limit = boundLevel(model, values);
   const top = Math.max(0, ...source.used.map(({ label }) => model.levels(label).upper));
@@ -114,7 +143,46 @@ function predictionsFrom(source: Source, { model, analysis }: ReadOptions, hot: 
   return {
     name: source.name,
     predictions: predictBands(model, options, inside, values, by95, source.lastBandOut, source.used),
+    levels: null,
     warnings,
+  };
+}
+
+/** Levels of a model whose states mix, on request of the same bonds with another isotope. */
+function levelsFrom(source: Source, { model, analysis }: ReadOptions, bond: string | null): SeriesPredictions {
+  const manifold = model.manifold!(analysis);
+  const top = Math.max(0, ...source.used.map(({ label }) => model.levels(label).upper));
+  const upTo = analysis.upTo ?? (top > 0 ? top + 1 : 3);
+  const { values, warnings } = bond === null ? source : otherBond(source, manifold, bond);
+  return {
+    name: source.name,
+    predictions: [],
+    levels: manifoldAt(manifold, values, bond === null ? source.by : { ...source.by, covariance: null }, upTo).levels,
+    warnings,
+  };
+}
+
+function otherBond(
+  { values, reducedMass, warnings }: Source,
+  manifold: Manifold,
+  text: string,
+): Pick<Source, "values" | "warnings"> {
+  const fault = (what: string, mend: string) =>
+    new InputError([{ code: "predict-bond", place: { source: "--predict-bond" }, what, mend }]);
+  const bond = readBond(text);
+  if ("what" in bond) throw fault(bond.what, bond.mend);
+  if (manifold.scaled === undefined) throw fault("this model is not scaled to other masses", "leave it out");
+  if (reducedMass === null)
+    throw fault("the masses of the bonds at hand are not known", 'give them too, such as --bond "16O 1H"');
+  return {
+    values: manifold.scaled(values, Math.sqrt(reducedMass / bond.reducedMass)),
+    warnings: [
+      ...warnings,
+      {
+        code: "mass-scaled",
+        message: `levels of ${bond.text} by mass scaling of ω̃ (ρ) and ω̃x (ρ²) with the reduced mass of the pair, λ kept: a polyatomic molecule follows that to some tenths of a percent at best, and the coupling of heavier atoms differs; check against one observed band`,
+      },
+    ],
   };
 }
 
@@ -186,8 +254,13 @@ async function fromConstants(
   request: FitRequest,
 ): Promise<Prepared> {
   const options = checked(await readOptions(requestSettings(request)));
-  const { constants } = options.model;
-  if (options.model.well === undefined)
+  // A model whose states mix tells by its options which constants there are.
+  const keys = options.model.manifold === undefined ? null : options.model.prepare([], options.analysis).parameters;
+  const constants =
+    keys === null
+      ? options.model.constants
+      : options.model.constants.filter(({ key }) => keys.some((parameter) => parameter.key === key));
+  if (options.model.well === undefined && options.model.manifold === undefined)
     throw new InputError([
       {
         code: "constants",

@@ -80,7 +80,10 @@ export async function readOptions(
     terms,
     autoTerms,
     fixed: model === null ? {} : readFixed(reader, model),
-    power: reader.number("power", (x) => x >= 3, OWN_SETTINGS.power!),
+    bonds: readBonds(reader),
+    cross: reader.choice("cross", ["yes", "no"], "no") === "yes",
+    bend: reader.choice("bend", ["degenerate", "single"], "degenerate"),
+    power: reader.number("power", (x) => x >= 3, OWN_SETTINGS.power![0]),
     excess: reader.choice<ExcessKind>("excess", ["scatter", "birge", "none"], "scatter"),
     scatter: reader.number("scatter", positive, "write the added scatter in cm-1, such as 0.3"),
     coverage: reader.number("coverage", (x) => x > 0 && x < 1, "write a probability between 0 and 1, such as 0.99"),
@@ -165,11 +168,22 @@ function readAirConditions(reader: Reader): AirConditions {
   return standardAir;
 }
 
-/** Settings that only some models know, with what to write. */
-const OWN_SETTINGS: Readonly<Record<string, string>> = {
-  power: "write n of the long-range potential D - Cn/r^n, 3 or more (no such law for less), such as 5 or 6",
-  cn: "write Cn in cm-1 Å^n, such as 3.1e5, or 3.1(2)e5 with its uncertainty",
-  limit: "write the limit in cm-1 above v = 0, such as 20043.1, or 20043.1(5) with its uncertainty",
+function readBonds(reader: Reader): number | "unlike" | null {
+  const text = reader.choice("bonds", ["2", "3", "4", "unlike"], "2");
+  return text === "unlike" ? text : Number(text);
+}
+
+/** Settings that only some models know, with what to write and whose they are. */
+const OWN_SETTINGS: Readonly<Record<string, readonly [mend: string, model: string]>> = {
+  power: [
+    "write n of the long-range potential D - Cn/r^n, 3 or more (no such law for less), such as 5 or 6",
+    "near-limit",
+  ],
+  cn: ["write Cn in cm-1 Å^n, such as 3.1e5, or 3.1(2)e5 with its uncertainty", "near-limit"],
+  limit: ["write the limit in cm-1 above v = 0, such as 20043.1, or 20043.1(5) with its uncertainty", "near-limit"],
+  bonds: ["write how many equivalent bonds there are: 2, 3 or 4, or unlike for two different ones", "coupled"],
+  cross: ["say that a cross anharmonicity is fitted too", "coupled"],
+  bend: ["write degenerate or single", "polyad"],
 };
 
 /** What the model cannot do without must be there, and what it does not know must not. */
@@ -178,17 +192,21 @@ function checkOwnSettings(reader: Reader, { name: model, settings }: Model): voi
   const required = settings?.required ?? [];
   for (const name of required)
     if (!reader.settings.has(name) && named !== undefined)
-      reader.fault(named, "setting-missing", `${model} needs --${name}`, OWN_SETTINGS[name]!);
-  const known = [...required, ...Object.keys(settings?.constants ?? {})];
-  for (const name of Object.keys(OWN_SETTINGS)) {
+      reader.fault(named, "setting-missing", `${model} needs --${name}`, OWN_SETTINGS[name]![0]);
+  const known = [...required, ...(settings?.own ?? []), ...Object.keys(settings?.constants ?? {})];
+  for (const [name, [mend, owner]] of Object.entries(OWN_SETTINGS)) {
     const setting = reader.settings.get(name);
-    if (setting !== undefined && !known.includes(name))
-      reader.fault(
-        setting,
-        "setting-of-another-model",
-        `"${name}" means nothing to the model ${model}`,
-        "leave it out, or name the model it belongs to: --model near-limit",
-      );
+    if (setting === undefined || known.includes(name)) continue;
+    // --bond and --bonds are one slip apart.
+    const slip = name === "bonds" && !/^[234]$|^unlike$/i.test(setting.value.trim());
+    reader.fault(
+      setting,
+      "setting-of-another-model",
+      `"${name}" means nothing to the model ${model}`,
+      slip
+        ? `for the two atoms write --bond "${setting.value}"; --bonds counts equivalent bonds of --model ${owner} (${mend})`
+        : `leave it out, or name the model it belongs to: --model ${owner}`,
+    );
   }
 }
 
@@ -219,7 +237,7 @@ function readFixed(reader: Reader, model: Model): Readonly<Record<string, Fixed>
   }
   for (const [name, key] of Object.entries(model.settings?.constants ?? {})) {
     const setting = reader.settings.get(name);
-    if (setting !== undefined) read(setting, key, setting.value, OWN_SETTINGS[name]!);
+    if (setting !== undefined) read(setting, key, setting.value, OWN_SETTINGS[name]![0]);
   }
   return fixed;
 }

@@ -55,6 +55,12 @@ export interface FitRequest {
   readonly cn?: Word;
   /** of model "near-limit": the limit in cm-1 above v = 0, held; with an uncertainty one more observation; @default fitted */
   readonly limit?: Word;
+  /** of model "coupled": 2, 3 or 4 equivalent bonds, or "unlike" for two different ones */
+  readonly bonds?: Word;
+  /** of model "coupled": also fit the cross anharmonicity wxcross; @default no */
+  readonly cross?: boolean | string;
+  /** of model "polyad": a "degenerate" or a "single" bend; @default "degenerate" */
+  readonly bend?: string;
   /** constants held, such as "weye=0.22"; with an uncertainty one more observation */
   readonly fix?: string;
   /** a constant common to all series, "wexe", or alike within a standard deviation, "wexe±0.5" */

@@ -1,2 +1,3 @@
 export * from "./list.ts";
+export type { Deperturbed, Manifold } from "./manifold.ts";
 export type * from "./model.ts";

@@ -5,6 +5,7 @@ import { oscillator } from "./oscillator.ts";
 const models: Readonly<Record<string, () => Promise<Model> | Model>> = {
   oscillator: () => oscillator,
   coupled: async () => (await import("./coupled/index.ts")).coupled,
+  polyad: async () => (await import("./polyad/index.ts")).polyad,
   "near-limit": async () => (await import("./near-limit/index.ts")).nearLimit,
 };
 

@@ -1,3 +1,5 @@
+import type { Warning } from "../messages/index.ts";
+
 /** A basis state and its part in a level; weights of one level add to 1. */
 export interface Part {
   readonly state: string;
@@ -29,6 +31,13 @@ export interface Consequence {
   readonly note: string | null;
 }
 
+/** An anharmonic oscillator inside the model, ν(0→v) = v·ω̃ - v(v+1)·ω̃x; `name` where there are several. */
+export interface InnerOscillator {
+  readonly name: string | null;
+  readonly omega: number;
+  readonly omegaX: number;
+}
+
 /** What a model with blocks of mixed states can tell beyond its constants. */
 export interface Manifold {
   /** the key in `MixedLevel.numbers` of the number that blocks keep */
@@ -38,4 +47,20 @@ export interface Manifold {
   /** all levels with block numbers up to this, by block and then from below */
   levels(p: readonly number[], upTo: number): MixedLevel[];
   consequences(upTo: number): Consequence[];
+  /** the bonds, for their Morse energies */
+  oscillators(p: readonly number[]): readonly InnerOscillator[];
+  /** what the labels of the data leave open, such as a sign */
+  warnings(labels: readonly string[], p: readonly number[]): Warning[];
+  /** constants for another mass of the light atom, ρ = √(μ/μ'); null where the model cannot tell */
+  scaled?(p: readonly number[], rho: number): number[];
+  /** overtones as they would be without the mixing, by v, beside the level a reader would take for them */
+  deperturbed?(p: readonly number[], upTo: number): readonly Deperturbed[];
+}
+
+/** An overtone without its neighbours, and the level that holds most of it. */
+export interface Deperturbed {
+  readonly v: number;
+  /** cm-1 */
+  readonly position: number;
+  readonly strongest: { readonly label: string; readonly energy: number; readonly share: number };
 }

@@ -21,6 +21,8 @@ export interface ModelOptions {
   readonly power?: number | null;
   /** how many equivalent bonds, or two unlike ones */
   readonly bonds?: number | "unlike" | null;
+  /** whether the bend of a stretch-bend polyad is degenerate; @default degenerate */
+  readonly bend?: "degenerate" | "single";
   /** whether a cross anharmonicity between bonds is fitted too */
   readonly cross?: boolean;
   /** of the series, in u; put there by the analysis */

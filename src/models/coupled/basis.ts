@@ -80,7 +80,7 @@ function statesOf(bonds: number, total: number): number[][] {
 }
 
 /** Orbits in the order of their energies without coupling: most quanta in one bond lowest; equal ones by their digits. */
-export function orbitsOf(bonds: number, total: number): Orbit[] {
+function orbitsOf(bonds: number, total: number): Orbit[] {
   return statesOf(bonds, total)
     .filter((state) => state.every((v, i) => i === 0 || v <= state[i - 1]!))
     .map((quanta) => ({

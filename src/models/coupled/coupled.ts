@@ -1,5 +1,5 @@
 import type { Prepared } from "../../fitting/index.ts";
-import type { Fault } from "../../messages/index.ts";
+import type { Fault, Warning } from "../../messages/index.ts";
 import type { Model, ModelOptions } from "../model.ts";
 import { consequencesOf } from "./consequences.ts";
 import { constants, keysOf, parametersOf } from "./constants.ts";
@@ -51,8 +51,37 @@ export const coupled: Model = {
     share: { key: "weight", title: "weight" },
     levels: (p, upTo) => levelsUpTo(options, keysOf(options), p, upTo),
     consequences: (upTo) => consequencesOf(options, upTo),
+    oscillators: (p) =>
+      options.bonds === "unlike"
+        ? [
+            { name: "bond 1", omega: p[0]!, omegaX: p[1]! },
+            { name: "bond 2", omega: p[2]!, omegaX: p[3]! },
+          ]
+        : [{ name: null, omega: p[0]!, omegaX: p[1]! }],
+    warnings: (labels, p) => signWarnings(options, labels, p),
+    scaled: (p, rho) =>
+      options.bonds === "unlike"
+        ? [p[0]! * rho, p[1]! * rho ** 2, p[2]! * rho, p[3]! * rho ** 2, p[4]!]
+        : p.map((x, k) => (k === 0 ? x * rho : k === 2 ? x : x * rho ** 2)),
   }),
 };
+
+/** With two bonds the levels do not depend on the sign of λ; only + and − of odd V tell it. */
+function signWarnings({ bonds, fixed }: ModelOptions, labels: readonly string[], p: readonly number[]): Warning[] {
+  const lambda = p.at(keysOf({ terms: null, fixed, bonds: bonds ?? null }).indexOf("lambda")) ?? 0;
+  if (fixed.lambda !== undefined || (bonds !== 2 && bonds !== "unlike")) return [];
+  const told =
+    bonds === 2 &&
+    labels.some((label) => label.split(/\s+from\s+/i).some((name) => /[+-]/.test(name) && quantaIn(name) % 2 === 1));
+  if (told) return [];
+  return [
+    {
+      code: "lambda-sign",
+      message: `the sign of λ is not determined: ${bonds === "unlike" ? "two unlike bonds have" : "levels of even V, and levels without + or −, have"} the same energies for λ and −λ, so only |λ| = ${Math.abs(lambda).toFixed(2)} cm-1 counts${bonds === 2 ? "; label levels of odd V with + and −" : ""}`,
+      about: "lambda",
+    },
+  ];
+}
 
 function quantaIn(text: string): number {
   const [state = ""] = /^[\d.]+/.exec(text.trim()) ?? [];

@@ -1,7 +1,7 @@
 import { symmetricEigen } from "../eigen.ts";
 import type { MixedLevel, Part } from "../manifold.ts";
 import type { ModelOptions } from "../model.ts";
-import { blocksOf, type Orbit, orbitsOf } from "./basis.ts";
+import { blocksOf, type Orbit } from "./basis.ts";
 
 /** A level before it has numbers: where it stands in its block, and what it is called. */
 export interface LevelName {
@@ -223,5 +223,3 @@ function compositionOf({ states, vectors }: SolvedBlock, at: number): Part[] {
     .filter(({ weight }) => weight > 1e-6)
     .sort((a, b) => b.weight - a.weight);
 }
-
-export { orbitsOf };

@@ -5,6 +5,7 @@ export { constantsTable, correlation } from "./constants.ts";
 export { derivedTable } from "./derived.ts";
 export { differencesTable } from "./differences.ts";
 export { dissociationTable, SAFETY_LINE } from "./dissociation.ts";
+export { consequencesTable, deperturbationTable, levelsTable } from "./levels.ts";
 export { LASER_LINE, predictionsTable } from "./predictions.ts";
 export { qualityEntries } from "./quality.ts";
 export { stabilityTable } from "./stability.ts";

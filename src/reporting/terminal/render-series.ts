@@ -3,12 +3,15 @@ import { type Symbols, symbolOf } from "../symbols.ts";
 import {
   bandsTable,
   commonErrorsTable,
+  consequencesTable,
   constantsTable,
   correlation,
+  deperturbationTable,
   derivedTable,
   dissociationTable,
   exclusions,
   LASER_LINE,
+  levelsTable,
   predictionsTable,
   qualityEntries,
   SAFETY_LINE,
@@ -30,6 +33,9 @@ export function renderSeries(series: SeriesResult, symbols: Symbols, paint: Pain
   const terms = termsTable(series);
   const derived = derivedTable(series);
   const common = commonErrorsTable(series);
+  const levels = levelsTable(series.levels);
+  const follows = consequencesTable(series);
+  const deperturbed = deperturbationTable(series);
   const heat = thermochemistryTable(series);
   const { fitReport, predictions } = series;
   return [
@@ -38,6 +44,9 @@ export function renderSeries(series: SeriesResult, symbols: Symbols, paint: Pain
     terms === null ? null : section("Number of terms", [terms], paint),
     section("Bands", [bandsTable(series), ...exclusions(series)], paint),
     common === null ? null : section("Errors in common", [common], paint),
+    levels === null ? null : section("Levels", [levels], paint),
+    deperturbed === null ? null : section("Overtones without the mixing", [deperturbed], paint),
+    follows === null ? null : section("What follows", [follows], paint),
     section("Dissociation", [{ ...dissociation, notes: dissociation.notes.map(printUnits) }, SAFETY_LINE], paint),
     heat === null ? null : section("Enthalpy of dissociation", [heat], paint),
     derived === null ? null : section("Derived", [derived], paint),

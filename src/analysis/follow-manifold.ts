@@ -1,0 +1,134 @@
+import type { Warning } from "../messages/index.ts";
+import type { Manifold } from "../models/index.ts";
+import { row } from "./dissociation/row.ts";
+import { type Propagation, propagate } from "./propagation.ts";
+import type { ConsequenceResult, Deperturbation, DissociationRow, LevelResult } from "./result.ts";
+import type { Solution } from "./solution.ts";
+
+/** What follows from constants of a model whose states mix. */
+export interface ManifoldFollows {
+  readonly levels: readonly LevelResult[];
+  readonly consequences: readonly ConsequenceResult[];
+  readonly deperturbation: Deperturbation | null;
+}
+
+/** Block numbers shown beyond those observed. */
+const BEYOND = 1;
+
+/** σ below this share of a wavenumber is finer than such models are good for (they err by 0.3 to 20 cm-1 on known molecules). */
+const MODEL_ERROR = 0.3;
+
+/** Everything that follows from a fit: levels, consequences, Morse energies of the bonds, and cautions. */
+export function followManifold(
+  solution: Solution,
+  manifold: Manifold,
+): ManifoldFollows & { readonly dissociation: readonly DissociationRow[]; readonly warnings: readonly Warning[] } {
+  const { fit, by, used, model, options, excess } = solution;
+  const top = Math.max(...used.map(({ label }) => model.levels(label).upper));
+  const p = fit.values;
+  const labels = used.map(({ label }) => label);
+  return {
+    ...manifoldAt(manifold, p, by, options.upTo ?? top + BEYOND),
+    dissociation: dissociationOf(manifold, p, by),
+    warnings: [...manifold.warnings(labels, p), ...atFaceValue(solution, excess.applied)],
+  };
+}
+
+/** Levels and consequences of given constants. */
+export function manifoldAt(manifold: Manifold, p: readonly number[], by: Propagation, upTo: number): ManifoldFollows {
+  return {
+    levels: manifold.levels(p, upTo).map(({ label, numbers, degeneracy, energy, gradient, share, composition }) => ({
+      label,
+      ...numbers,
+      degeneracy,
+      energy,
+      standardUncertainty: propagate(energy, gradient, "cm-1", by).standardUncertainty,
+      [manifold.share.key]: share,
+      composition,
+    })),
+    consequences: manifold.consequences(upTo).map(({ key, symbol, unit, of, note }) => {
+      const value = of(p);
+      return { key, symbol, quantity: value === null ? null : propagate(value, differences(of, p), unit, by), note };
+    }),
+    deperturbation: deperturbationOf(manifold, p, by, upTo),
+  };
+}
+
+/** Gradient by central differences of a smooth function of the constants: for numbers whose derivatives are not written out. */
+function differences(of: (p: readonly number[]) => number | null, p: readonly number[]): number[] {
+  return p.map((x, k) => {
+    const step = 1e-5 * Math.max(1, Math.abs(x));
+    const at = (shift: number) => of(p.map((y, j) => (j === k ? y + shift : y)));
+    const [high, low] = [at(step), at(-step)];
+    return high === null || low === null ? 0 : (high - low) / (2 * step);
+  });
+}
+
+const FROZEN_FRAME =
+  "Morse form of the bond's own constants, an extrapolation (on X-H bonds 7 to 30 % high); D is that of a frozen frame, not a relaxed D0 or D298";
+
+function dissociationOf(manifold: Manifold, p: readonly number[], by: Propagation): DissociationRow[] {
+  return manifold.oscillators(p).map(({ name }, k) => {
+    const note = `${name === null ? "" : `${name}: `}${FROZEN_FRAME}`;
+    const of = (what: (omega: number, omegaX: number) => number) => (q: readonly number[]) => {
+      const { omega, omegaX } = manifold.oscillators(q)[k]!;
+      return omega > 0 && omegaX > 0 ? what(omega, omegaX) : null;
+    };
+    const [de, d0] = [of((w, x) => w ** 2 / (4 * x)), of((w, x) => w ** 2 / (4 * x) - w / 2 + x / 4)];
+    const [deNow, d0Now] = [de(p), d0(p)];
+    if (deNow === null || d0Now === null)
+      return row("morse", null, null, `${name === null ? "" : `${name}: `}ω̃x is not positive, and no limit follows`);
+    return row(
+      "morse",
+      propagate(deNow, differences(de, p), "cm-1", by),
+      propagate(d0Now, differences(d0, p), "cm-1", by),
+      note,
+    );
+  });
+}
+
+function deperturbationOf(
+  manifold: Manifold,
+  p: readonly number[],
+  by: Propagation,
+  upTo: number,
+): Deperturbation | null {
+  const overtones = manifold.deperturbed?.(p, upTo);
+  if (overtones === undefined) return null;
+  const position = (v: number) => (q: readonly number[]) =>
+    manifold.deperturbed!(q, v).find((one) => one.v === v)!.position;
+  const own = (key: "omega" | "omegaX") => (q: readonly number[]) => manifold.oscillators(q)[0]![key];
+  const quantity = (of: (q: readonly number[]) => number) => propagate(of(p), differences(of, p), "cm-1", by);
+  return {
+    overtones: overtones.map(({ v, strongest }) => ({ v, deperturbed: quantity(position(v)), strongest })),
+    constants: { w: quantity(own("omega")), wx: quantity(own("omegaX")) },
+    naive: naive(overtones.map(({ v, strongest }) => [v, strongest.energy] as const)),
+  };
+}
+
+/** Least squares of ν = v·ω̃ - v(v+1)·ω̃x through levels read as overtones. */
+function naive(points: readonly (readonly [number, number])[]): { w: number; wx: number } | null {
+  if (points.length < 2) return null;
+  let [a, b, c, s, t] = [0, 0, 0, 0, 0];
+  for (const [v, energy] of points) {
+    const y = -v * (v + 1);
+    a += v * v;
+    b += v * y;
+    c += y * y;
+    s += v * energy;
+    t += y * energy;
+  }
+  const determinant = a * c - b * b;
+  return { w: (c * s - b * t) / determinant, wx: (a * t - b * s) / determinant };
+}
+
+function atFaceValue({ used, sigmaKnown, options }: Solution, applied: boolean): Warning[] {
+  const finest = Math.min(...used.map(({ sigma }) => sigma ?? Number.POSITIVE_INFINITY));
+  if (!sigmaKnown || applied || options.scatter !== null || finest >= MODEL_ERROR) return [];
+  return [
+    {
+      code: "model-error-left-out",
+      message: `σ down to ${Number(finest.toPrecision(2))} cm-1 is taken at face value, but models of this kind err by 0.3 to 20 cm-1 on known molecules: constants and levels are less certain than stated; give --scatter 0.5, or let --excess scatter estimate it from more levels`,
+    },
+  ];
+}

@@ -1,0 +1,1 @@
+export { polyad } from "./polyad.ts";

@@ -1,0 +1,210 @@
+import { fitValues, type Parameter, type Prepared, UNTREATED } from "../../fitting/index.ts";
+import type { Fault } from "../../messages/index.ts";
+import type { Consequence, Manifold, MixedLevel } from "../manifold.ts";
+import type { Model, ModelOptions } from "../model.ts";
+import { type SolvedBlock, sizeOf, solveBlock } from "./blocks.ts";
+import { constants, keysOf, parametersOf } from "./constants.ts";
+import { labelOf, type PolyadLevel, readLabel } from "./label.ts";
+
+const isSingle = ({ bend }: ModelOptions) => bend === "single";
+
+/**
+ * Fermi polyads of one X-H chromophore, a stretch and a bend of half its wavenumber (Dübal & Quack 1984; Baggott et al. 1985): N = v_s + v_b/2 is kept, levels
+ * of N and l are numbered from the highest down. They repel each other, so that the numbering never changes while constants move.
+ */
+export const polyad: Model = {
+  name: "polyad",
+  title: "stretch-bend polyads of one X-H chromophore",
+  labelForm: "N_j, such as 2_1, or N_j:l, such as 1.5_1:1",
+  references: ["dubalquack1984", "baggott1985"],
+  terms: null,
+  constants,
+  settings: { required: [], constants: {}, own: ["bend"] },
+  check: ({ bands }, options) =>
+    bands.flatMap((band): Fault[] => {
+      const read = readLabel(band.label, isSingle(options));
+      if (!("what" in read)) return [];
+      return [{ code: "label", place: { ...band.place, column: band.place.column ?? "band" }, ...read }];
+    }),
+  prepare: (transitions, options) =>
+    prepared(
+      transitions.map(({ label }) => levelOf(label, options)),
+      options,
+    ),
+  starts: (transitions, observed, options) =>
+    starts(
+      transitions.map(({ label }) => levelOf(label, options)),
+      observed,
+      options,
+    ),
+  labels: () => [],
+  levels: (label) => ({ upper: Number.parseFloat(label), lower: 0 }),
+  manifold: (options) => manifold(options),
+};
+
+function levelOf(label: string, options: ModelOptions): PolyadLevel {
+  const read = readLabel(label, isSingle(options));
+  if ("what" in read) throw new RangeError(read.what);
+  return read;
+}
+
+/** Blocks at given constants, each solved once. */
+function solver(options: ModelOptions, p: readonly number[]): (n: number, l: number) => SolvedBlock {
+  const solved = new Map<string, SolvedBlock>();
+  return (n, l) => {
+    const key = `${n} ${l}`;
+    let block = solved.get(key);
+    if (block === undefined) {
+      block = solveBlock(n, l, isSingle(options), p);
+      solved.set(key, block);
+    }
+    return block;
+  };
+}
+
+function prepared(levels: readonly PolyadLevel[], options: ModelOptions): Prepared {
+  return {
+    parameters: parametersOf(options),
+    linear: false,
+    evaluate(p) {
+      const block = solver(options, p);
+      return {
+        calculated: levels.map(({ n, j, l }) => block(n, l).energies[j - 1]!),
+        jacobian: levels.map(({ n, j, l }) => block(n, l).gradients[j - 1]!),
+      };
+    },
+  };
+}
+
+/** First constants by least squares about a guess, three times; vague priors stand in where the levels leave a constant open. */
+function starts(levels: readonly PolyadLevel[], observed: readonly number[], options: ModelOptions): number[] {
+  const keys = keysOf(options);
+  const mean = (values: readonly number[], otherwise: number) =>
+    values.length === 0 ? otherwise : values.reduce((sum, x) => sum + x, 0) / values.length;
+  const highest = levels.flatMap(({ n, j, l }, i) => (j === 1 && l === 0 ? [observed[i]! / n] : []));
+  const lowest = levels.flatMap(({ n, j, l }, i) => (j === sizeOf(n, l) ? [observed[i]! / (2 * n)] : []));
+  const wb = mean(lowest, mean(highest, 2800) / 2.1);
+  const guess: Readonly<Record<string, number>> = {
+    ws: mean(highest, 2.1 * wb),
+    wb,
+    xss: -50,
+    xbb: -5,
+    xsb: -20,
+    gbb: 5,
+    ksbb: 60,
+  };
+  const width: Readonly<Record<string, number>> = { ws: 300, wb: 150, xss: 50, xbb: 10, xsb: 30, gbb: 10, ksbb: 80 };
+  const parameters = parametersOf(options).map((parameter): Parameter => {
+    if (parameter.held !== undefined || parameter.prior !== undefined) return parameter;
+    return { ...parameter, prior: { value: guess[parameter.key]!, sigma: width[parameter.key]! } };
+  });
+  let p = parameters.map(({ held, prior }) => held ?? prior!.value);
+  const { evaluate } = prepared(levels, options);
+  for (let round = 0; round < 4; round++) {
+    const { calculated, jacobian } = evaluate(p);
+    const base = p;
+    p = fitValues(
+      {
+        parameters,
+        linear: true,
+        evaluate: (q) => ({
+          calculated: jacobian.map((row) => row.reduce((sum, x, k) => sum + x * q[k]!, 0)),
+          jacobian,
+        }),
+        observed: observed.map(
+          (y, i) => y - calculated[i]! + jacobian[i]!.reduce((sum, x, k) => sum + x * base[k]!, 0),
+        ),
+        errors: { sigmas: observed.map(() => 1), mixing: null, shared: [] },
+      },
+      UNTREATED,
+    );
+    const k = keys.indexOf("ksbb");
+    p[k] = Math.abs(p[k]!);
+  }
+  return p;
+}
+
+function manifold(options: ModelOptions): Manifold {
+  const keys = keysOf(options);
+  const at = (key: string) => keys.indexOf(key);
+  const single = isSingle(options);
+  return {
+    block: "N",
+    share: { key: "stretchShare", title: "stretch share" },
+    levels: (p, upTo) => levelsUpTo(options, p, upTo),
+    consequences: () => consequences(at("ksbb"), single),
+    oscillators: (p) => [{ name: null, omega: p[at("ws")]! - p[at("xss")]!, omegaX: -p[at("xss")]! }],
+    warnings: () =>
+      options.fixed.ksbb === undefined
+        ? [
+            {
+              code: "k-sign",
+              message: "the sign of ksbb is not determined: no energy depends on it; it is given as positive",
+              about: "ksbb",
+            },
+          ]
+        : [],
+    deperturbed: (p, upTo) => {
+      const block = solver(options, p);
+      return Array.from({ length: Math.floor(upTo) }, (_, i) => i + 1).map((v) => {
+        const { energies, vectors } = block(v, 0);
+        // The pure stretch is the first state of the block.
+        const shares = vectors.map((c) => c[0]! ** 2);
+        const best = shares.indexOf(Math.max(...shares));
+        return {
+          v,
+          position: p[at("ws")]! * v + p[at("xss")]! * v * v,
+          strongest: { label: labelOf({ n: v, j: best + 1, l: 0 }), energy: energies[best]!, share: shares[best]! },
+        };
+      });
+    },
+  };
+}
+
+function levelsUpTo(options: ModelOptions, p: readonly number[], upTo: number): MixedLevel[] {
+  const block = solver(options, p);
+  const single = isSingle(options);
+  const levels: MixedLevel[] = [];
+  for (let twice = 1; twice <= 2 * upTo; twice++) {
+    const n = twice / 2;
+    const momenta = single ? [0] : Array.from({ length: twice + 1 }, (_, l) => l).filter((l) => l % 2 === twice % 2);
+    const all = momenta.flatMap((l) => {
+      const { energies, vectors, gradients, states } = block(n, l);
+      return energies.map((energy, i): MixedLevel => {
+        const composition = vectors[i]!.map((c, k) => ({ state: `${states[k]!.s},${states[k]!.b}`, weight: c * c }))
+          .filter(({ weight }) => weight > 1e-6)
+          .sort((a, b) => b.weight - a.weight);
+        return {
+          label: labelOf({ n, j: i + 1, l }),
+          numbers: { N: n, l, j: i + 1 },
+          degeneracy: l === 0 ? 1 : 2,
+          energy,
+          gradient: gradients[i]!,
+          share: vectors[i]![0]! ** 2,
+          composition,
+        };
+      });
+    });
+    levels.push(...all.sort((a, b) => a.energy - b.energy));
+  }
+  return levels;
+}
+
+function consequences(k: number, single: boolean): Consequence[] {
+  return [
+    {
+      key: "firstCoupling",
+      symbol: `W(1,0; 0,2) = ${single ? "ksbb/2" : "ksbb/√2"}`,
+      unit: "cm-1",
+      of: (p) => Math.abs(p[k]!) * (single ? 0.5 : Math.SQRT1_2),
+      note: "coupling of the fundamental with the overtone of the bend",
+    },
+    {
+      key: "phi",
+      symbol: "φsbb = 2·ksbb",
+      unit: "cm-1",
+      of: (p) => 2 * Math.abs(p[k]!),
+      note: "constant of the term ½·φsbb·qs·qb² in dimensionless normal coordinates",
+    },
+  ];
+}
