@@ -37,15 +37,18 @@ export function followManifold(
 /** Levels and consequences of given constants. */
 export function manifoldAt(manifold: Manifold, p: readonly number[], by: Propagation, upTo: number): ManifoldFollows {
   return {
-    levels: manifold.levels(p, upTo).map(({ label, numbers, degeneracy, energy, gradient, share, composition }) => ({
-      label,
-      ...numbers,
-      degeneracy,
-      energy,
-      standardUncertainty: propagate(energy, gradient, "cm-1", by).standardUncertainty,
-      [manifold.share.key]: share,
-      composition,
-    })),
+    levels: manifold
+      .levels(p, upTo)
+      .map(({ label, numbers, degeneracy, energy, uncoupled, gradient, share, composition }) => ({
+        label,
+        ...numbers,
+        degeneracy,
+        energy,
+        standardUncertainty: propagate(energy, gradient, "cm-1", by).standardUncertainty,
+        uncoupled,
+        [manifold.share.key]: share,
+        composition,
+      })),
     consequences: manifold.consequences(upTo).map(({ key, symbol, unit, of, note }) => {
       const value = of(p);
       return { key, symbol, quantity: value === null ? null : propagate(value, differences(of, p), unit, by), note };

@@ -149,6 +149,8 @@ export interface LevelResult {
   readonly degeneracy: number;
   readonly energy: number;
   readonly standardUncertainty: number | null;
+  /** where it would lie without the coupling */
+  readonly uncoupled: number;
   /** of the local state that names the level */
   readonly weight?: number;
   /** of the pure stretch, which carries the intensity */

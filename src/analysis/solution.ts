@@ -14,7 +14,7 @@ import {
   UndeterminedError,
 } from "../fitting/index.ts";
 import { InputError } from "../messages/index.ts";
-import type { Model } from "../models/index.ts";
+import { type Model, symmetricEigen } from "../models/index.ts";
 import { chiSquareUpperTail } from "../quantity/index.ts";
 import { type CurvedFit, fitCurved, settle } from "./curved-fit.ts";
 import { errorModel as errorModelOf } from "./error-model.ts";
@@ -61,7 +61,7 @@ export function solve(series: Series, model: Model, options: AnalysisOptions): S
   const errors = errorModelOf(series, used, model);
   const problem: Problem = { ...model.prepare(used, options), observed: used.map((band) => band.position), errors };
   const curved = problem.linear ? null : curvedStart(series, model, used, problem, options);
-  const stated = curved?.fit ?? determined(series, model, used, problem, () => fitLinear(problem));
+  const stated = curved?.fit ?? determined(series, model, used, problem, options, () => fitLinear(problem));
   const sigmaKnown = errors.sigmas !== null;
   const dof = stated.degreesOfFreedom;
   const probability = sigmaKnown && dof > 0 ? chiSquareUpperTail(stated.chiSquare, dof) : null;
@@ -130,14 +130,21 @@ function curvedStart(
   options: AnalysisOptions,
 ): CurvedFit {
   demandLevels(series, used, model);
-  return determined(series, model, used, problem, () => {
+  return determined(series, model, used, problem, options, () => {
     const start = model.starts?.(used, problem.observed, options) ?? null;
     if (start === null) throw new UndeterminedError(0, "no first values follow from the bands");
     return fitCurved(problem, UNTREATED, start);
   });
 }
 
-function determined<T>(series: Series, model: Model, used: readonly Band[], problem: Problem, fit: () => T): T {
+function determined<T>(
+  series: Series,
+  model: Model,
+  used: readonly Band[],
+  problem: Problem,
+  options: AnalysisOptions,
+  fit: () => T,
+): T {
   try {
     return fit();
   } catch (error) {
@@ -149,7 +156,7 @@ function determined<T>(series: Series, model: Model, used: readonly Band[], prob
     const mend =
       distinct < free.length
         ? `give at least ${free.length} different bands, ${model.terms === null ? "or" : "ask for fewer --terms, or"} hold a constant with --fix`
-        : `they leave ${problem.parameters[error.parameter]!.symbol} open; add a band from another level or hold that constant with --fix`;
+        : `they leave ${openDirection(problem, model.starts?.(used, problem.observed, options) ?? null) ?? problem.parameters[error.parameter]!.symbol} open; add a band from another level or hold a constant of these with --fix`;
     throw new InputError([{ code: "not-determined", place, what: `series "${series.name}": ${few}`, mend }], 3);
   }
 }
@@ -203,4 +210,23 @@ function repeats(used: readonly Band[]): number[][] {
     else group.push(i);
   });
   return [...groups.values()];
+}
+
+/** A direction among the constants that no datum depends on, such as `ω̃ : ω̃x = 2 : 1`; null where it is one constant alone. */
+function openDirection(problem: Problem, at: readonly number[] | null): string | null {
+  const { parameters } = problem;
+  const { jacobian } = problem.evaluate(at ?? parameters.map(() => 0));
+  const free = parameters.flatMap(({ held }, k) => (held === undefined ? [k] : []));
+  const scaled = jacobian.map((row) => free.map((k) => row[k]! * parameters[k]!.typical));
+  if (!scaled.flat().every(Number.isFinite)) return null;
+  const gram = free.map((_, i) => free.map((__, j) => scaled.reduce((sum, row) => sum + row[i]! * row[j]!, 0)));
+  const direction = symmetricEigen(gram).vectors[0]!.map((x, i) => x * parameters[free[i]!]!.typical);
+  const largest = Math.max(...direction.map((x, i) => Math.abs(x) / parameters[free[i]!]!.typical));
+  const parts = direction.flatMap((x, i) => {
+    const { symbol, typical } = parameters[free[i]!]!;
+    return Math.abs(x) / typical > 1e-3 * largest ? [{ symbol, x }] : [];
+  });
+  if (parts.length < 2) return parts[0]?.symbol ?? null;
+  const unit = Math.min(...parts.map(({ x }) => Math.abs(x))) * Math.sign(parts[0]!.x);
+  return `the direction ${parts.map(({ symbol }) => symbol).join(" : ")} = ${parts.map(({ x }) => Number((x / unit).toPrecision(3))).join(" : ")}`;
 }

@@ -101,7 +101,12 @@ export function mediumFrom(text: string): Medium | Wrong {
 /** A bond or what is wrong with it. */
 export function bondFrom(text: string): Bond | Wrong {
   const bond = readBond(text);
-  return "what" in bond ? { code: "bond", ...bond } : bond;
+  if (!("what" in bond)) return bond;
+  // --bond and --bonds are one slip apart.
+  const mend = /^([2-9]|unlike)$/i.test(text.trim())
+    ? `${bond.mend}; the number of coupled bonds is --bonds ${text.trim()}`
+    : bond.mend;
+  return { code: "bond", what: bond.what, mend };
 }
 
 function massFrom(text: string): Bond | Wrong {

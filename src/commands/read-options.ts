@@ -80,7 +80,7 @@ export async function readOptions(
     terms,
     autoTerms,
     fixed: model === null ? {} : readFixed(reader, model),
-    bonds: readBonds(reader),
+    bonds: model?.settings?.own?.includes("bonds") === true ? readBonds(reader) : null,
     cross: reader.choice("cross", ["yes", "no"], "no") === "yes",
     bend: reader.choice("bend", ["degenerate", "single"], "degenerate"),
     power: reader.number("power", (x) => x >= 3, OWN_SETTINGS.power![0]),

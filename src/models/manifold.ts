@@ -13,6 +13,8 @@ export interface MixedLevel {
   readonly numbers: Readonly<Record<string, number | string>>;
   readonly degeneracy: number;
   readonly energy: number;
+  /** where it would lie without the coupling */
+  readonly uncoupled: number;
   /** dE/dp by the constants, in their order (Hellmann–Feynman) */
   readonly gradient: readonly number[];
   /** the share that `Manifold.share` names */

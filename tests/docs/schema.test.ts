@@ -38,6 +38,19 @@ describe("the schemas describe every key of the documents, and no document has a
     ["draws", { ...hcl, intervals: "resample", resamples: 200, terms: 3 }],
     ["a robust fit", { ...hcl, robust: "tukey" }],
     ["an enthalpy", { ...hcl, diatomic: true, acceptedEnthalpy: "431.6(1)" }],
+    ["coupled bonds", { input: file("coupled/h2o.csv"), model: "coupled", bonds: 2 }],
+    [
+      "unlike bonds",
+      { bands: "1.0 3640, 0.1 3530, 2.0 7120, 0.2 6890, 1.1 7180, 3.0 10300", model: "coupled", bonds: "unlike" },
+    ],
+    [
+      "a polyad",
+      {
+        bands: "1_1 3037.7, 1_2 2704.3, 2_1 5959.5, 2_2 5710, 2_3 5340.5, 3_1 8785.4, 3_2 8591.6",
+        model: "polyad",
+        fix: "gbb=5",
+      },
+    ],
     ["groups and a mixture", { ...hcl, bond: "H Cl", sharedSigma: 0.01 }],
     ["a file of two bonds with excluded bands", { input: file("demo/bonds-a-and-b.csv") }],
     ["levels refused as not near the limit", { input: file("h2.csv"), model: "near-limit", power: 6 }],
@@ -48,6 +61,8 @@ describe("the schemas describe every key of the documents, and no document has a
   it("predict", async () => {
     expect(faults("predict", await predict({ ...hcl, hot: 1 }))).toEqual([]);
     expect(faults("predict", await predict({ constants: "we=2990.95(1) wexe=52.82(1)" }))).toEqual([]);
+    const bonds = { model: "coupled", bonds: 3, constants: "w=2200 wx=38.5 lambda=-3.7", upTo: 3 } as const;
+    expect(faults("predict", await predict(bonds))).toEqual([]);
   });
 
   it("assign", async () => {

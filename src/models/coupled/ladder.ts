@@ -203,6 +203,7 @@ export function levelsUpTo(
         numbers: { V: total, ...(bonds === "unlike" ? {} : { species: name.species }) },
         degeneracy: name.degeneracy,
         energy: block.energies[at]!,
+        uncoupled: uncoupledEnergy(keys, p, name.quanta),
         gradient: block.gradients[at]!,
         share: composition.find(({ state }) => state === digits(name.quanta, bonds))?.weight ?? 0,
         composition,
@@ -210,6 +211,16 @@ export function levelsUpTo(
     });
     return levels.sort((a, b) => a.energy - b.energy);
   });
+}
+
+function uncoupledEnergy(keys: readonly string[], p: readonly number[], quanta: readonly number[]): number {
+  const of = (key: string) => p[keys.indexOf(key)] ?? 0;
+  const pair = quanta.flatMap((v, i) => quanta.slice(i + 1).map((u) => u * v)).reduce((sum, x) => sum + x, 0);
+  const each = quanta.map((v, i) => {
+    const ending = keys.includes("w1") ? String(i + 1) : "";
+    return v * of(`w${ending}`) - v * (v + 1) * of(`wx${ending}`);
+  });
+  return each.reduce((sum, x) => sum + x, 0) - pair * of("wxcross");
 }
 
 /** Weights by local state, equal digits together, largest first; below 1e-6 left out. */

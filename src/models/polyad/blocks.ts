@@ -10,6 +10,8 @@ interface Block {
 export interface SolvedBlock {
   readonly states: Block["states"];
   readonly energies: readonly number[];
+  /** the same without the coupling */
+  readonly uncoupled: readonly number[];
   readonly vectors: readonly (readonly number[])[];
   /** dE/dp (Hellmann–Feynman) */
   readonly gradients: readonly (readonly number[])[];
@@ -71,6 +73,7 @@ export function solveBlock(n: number, l: number, single: boolean, p: readonly nu
   return {
     states,
     energies: [...values].reverse(),
+    uncoupled: hamiltonian.map((row, i) => row[i]!).sort((a, b) => b - a),
     vectors: down,
     gradients: down.map((c) =>
       parts.map((part) => c.reduce((sum, x, i) => sum + x * c.reduce((inner, y, j) => inner + part[i]![j]! * y, 0), 0)),

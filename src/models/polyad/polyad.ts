@@ -169,7 +169,7 @@ function levelsUpTo(options: ModelOptions, p: readonly number[], upTo: number): 
     const n = twice / 2;
     const momenta = single ? [0] : Array.from({ length: twice + 1 }, (_, l) => l).filter((l) => l % 2 === twice % 2);
     const all = momenta.flatMap((l) => {
-      const { energies, vectors, gradients, states } = block(n, l);
+      const { energies, uncoupled, vectors, gradients, states } = block(n, l);
       return energies.map((energy, i): MixedLevel => {
         const composition = vectors[i]!.map((c, k) => ({ state: `${states[k]!.s},${states[k]!.b}`, weight: c * c }))
           .filter(({ weight }) => weight > 1e-6)
@@ -179,6 +179,7 @@ function levelsUpTo(options: ModelOptions, p: readonly number[], upTo: number): 
           numbers: { N: n, l, j: i + 1 },
           degeneracy: l === 0 ? 1 : 2,
           energy,
+          uncoupled: uncoupled[i]!,
           gradient: gradients[i]!,
           share: vectors[i]![0]! ** 2,
           composition,
