@@ -52,6 +52,9 @@ export async function report(request: ReportRequest, assets?: FigureAssets): Pro
           notation,
           symbols,
           modelReferences: gathered.options.model.references,
+          ...(gathered.options.model.definition === undefined
+            ? {}
+            : { modelDefinition: gathered.options.model.definition }),
         }),
       },
       ...pictures.map((content, i) => ({ name: figures[i]!.file, content })),

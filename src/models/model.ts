@@ -89,6 +89,8 @@ export interface Model {
   readonly labelForm: string;
   /** keys into the list of references */
   readonly references: readonly string[];
+  /** the definition of the constants in one sentence, for the methods paragraph, where the works alone leave sign and factor open */
+  readonly definition?: string;
   /** how many constants a user may ask for; null where the number is given by the model */
   readonly terms: { readonly least: number; readonly most: number; readonly default: number } | null;
   readonly constants: readonly ConstantInfo[];

@@ -172,6 +172,41 @@ export const references = {
     title: "The AME 2020 atomic mass evaluation (II). Tables, graphs and references",
     where: "Chin. Phys. C 45, 030003",
   },
+  // from memory
+  childlawton1981: {
+    authors: "M. S. Child, R. T. Lawton",
+    year: 1981,
+    title: "Local and normal vibrational states: a harmonically coupled anharmonic-oscillator model",
+    where: "Faraday Discuss. Chem. Soc. 71, 273",
+  },
+  // from memory
+  mortensen1981: {
+    authors: "O. S. Mortensen, B. R. Henry, M. A. Mohammadi",
+    year: 1981,
+    title: "The effects of symmetry within the local mode picture",
+    where: "J. Chem. Phys. 75, 4800",
+  },
+  // from memory
+  childhalonen1984: {
+    authors: "M. S. Child, L. Halonen",
+    year: 1984,
+    title: "Overtone frequencies and intensities in the local mode picture",
+    where: "Adv. Chem. Phys. 57, 1",
+  },
+  // from memory
+  dubalquack1984: {
+    authors: "H.-R. Dübal, M. Quack",
+    year: 1984,
+    title: "Tridiagonal Fermi resonance structure in the IR spectrum of the excited CH chromophore in CF3H",
+    where: "J. Chem. Phys. 81, 3779",
+  },
+  // from memory
+  baggott1985: {
+    authors: "J. E. Baggott, M.-C. Chuang, R. N. Zare, H.-R. Dübal, M. Quack",
+    year: 1985,
+    title: "Structure and dynamics of the excited CH-chromophore in (CF3)3CH",
+    where: "J. Chem. Phys. 82, 1186",
+  },
 } as const satisfies Record<string, Reference>;
 
 export type ReferenceKey = keyof typeof references;

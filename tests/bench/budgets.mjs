@@ -39,6 +39,9 @@ try {
   const inProcess = await buildBench();
   line("full result in process", inProcess.microsecondsPerSeries, "µs", 100);
   line("10 000 resamples of a linear fit", inProcess.resampleCpuSeconds, "s CPU", 0.2);
+  line("three coupled bonds to V = 8, 30 levels", inProcess.threeBonds, "s", 1);
+  line("four coupled bonds to V = 6, 30 levels", inProcess.fourBonds, "s", 1);
+  line("polyads to N = 5, 30 levels", inProcess.polyads, "s", 1);
   const many = join(folder, "many.csv");
   const rows = Array.from({ length: 10_000 }, (_, i) =>
     [1, 2, 3, 4, 5, 6].map((v) => `s${i},${v}-0,${(3800 + i / 100) * v - 80 * v * (v + 1)}`).join("\n"),

@@ -23,6 +23,8 @@ export const coupled: Model = {
   title: "anharmonic oscillators in harmonic coupling",
   labelForm: "10+, 20-, 11, 210E or 2100F2, or 20+ from 10-",
   references: ["childlawton1981", "mortensen1981", "childhalonen1984"],
+  definition:
+    "Energies above the ground state: Σ[v_i·ω̃ − v_i(v_i+1)·ω̃x], and ⟨… v_i+1 … v_j−1 …|H|… v_i … v_j …⟩ = λ·√((v_i+1)·v_j); levels are matched by symmetry species and order from below among those of equal total quanta",
   terms: null,
   constants,
   settings: { required: ["bonds"], constants: {}, own: ["bonds", "cross"] },

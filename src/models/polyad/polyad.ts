@@ -17,6 +17,8 @@ export const polyad: Model = {
   title: "stretch-bend polyads of one X-H chromophore",
   labelForm: "N_j, such as 2_1, or N_j:l, such as 1.5_1:1",
   references: ["dubalquack1984", "baggott1985"],
+  definition:
+    "Energies above the ground state: ν̃s·v_s + ν̃b·v_b + xss·v_s² + xbb·v_b² + xsb·v_s·v_b + gbb·l², and ⟨v_s−1, v_b+2|H|v_s, v_b⟩ = −½·ksbb·√(½·v_s·(v_b−l+2)(v_b+l+2)), of a single bend −½·ksbb·√(½·v_s·(v_b+1)(v_b+2)); levels of N = v_s + v_b/2 are numbered from the highest down",
   terms: null,
   constants,
   settings: { required: [], constants: {}, own: ["bend"] },

@@ -11,7 +11,7 @@ import { paddedRange } from "./ticks.ts";
 export function levelResidualsFigure(series: SeriesResult, options: FigureOptions, name: string): FigureSpec | null {
   const { levels, bands } = series;
   if (levels === null) return null;
-  const kinds = [...new Set(levels.map(({ species, l }) => species ?? (l === undefined ? "" : `l = ${l}`)))];
+  const kinds = [...new Set(levels.map(({ species, l }) => species ?? (l === undefined ? "" : `l = ${l}`)))].sort();
   const shown = bands.flatMap(({ label, residual, standardUncertainty: u, used }) => {
     const level = levels.find((one) => one.label === label.split(/\s+from\s+/i)[0]);
     if (level === undefined || residual === null || !used) return [];

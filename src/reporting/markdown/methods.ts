@@ -15,6 +15,8 @@ export interface Methods {
   readonly citations: Citations;
   /** keys of the works that describe the model */
   readonly modelReferences: readonly string[];
+  /** how the model defines its constants; null where the works say it */
+  readonly modelDefinition: string | null;
 }
 
 const RAISED = ["", "", "²", "³", "⁴", "⁵", "⁶"];
@@ -28,7 +30,7 @@ function termValues(keys: readonly string[], symbols: Symbols): string {
 }
 
 /** Equations and works that were really used, and nothing else. */
-export function methods({ document, notation, symbols, citations, modelReferences }: Methods): string {
+export function methods({ document, notation, symbols, citations, modelReferences, modelDefinition }: Methods): string {
   const { series, request } = document;
   const { cite } = citations;
   const any = (test: (one: SeriesResult) => boolean) => series.some(test);
@@ -46,12 +48,17 @@ export function methods({ document, notation, symbols, citations, modelReference
       `Term values: ${termValues(longest, symbols)}${series.length > 1 ? " with as many terms as each series has" : ""}; a band v′-v″ lies at G(v′) − G(v″) ${cite(...works)}.`,
     );
   else if (works.length > 0) text.push(`The model is that of ${cite(...works)}.`);
+  if (modelDefinition !== null) text.push(`${modelDefinition}.`);
   if (notation === "local" && any(({ terms }) => terms !== null))
     text.push(
       `Local-mode notation, the same algebra: for two terms ν̃(0 → v) = v ω̃ − v(v + 1) ω̃x ${cite("henry1977")}.`,
     );
   text.push(...howItWasFitted(series, request, cite));
-  if (row("morse")) text.push(`Morse relation: De = ${first}²/(4${second}), D0 = De − G(0) ${cite("morse1929")}.`);
+  const mixed = any(({ levels }) => levels !== null);
+  const [omega, omegaX] = mixed ? ["ω̃", "ω̃x"] : [first, second];
+  if (row("morse")) text.push(`Morse relation: De = ${omega}²/(4${omegaX}), D0 = De − G(0) ${cite("morse1929")}.`);
+  if (any(({ deperturbation }) => deperturbation !== null))
+    text.push("Of the pure stretch, ω̃x = −xss and ω̃ = ν̃s + ω̃x.");
   if (row("spacing-sum"))
     text.push(
       `Spacing sum: the highest observed level and a straight-line remainder of the spacings beyond it ${cite("birge1926")}.`,

@@ -42,6 +42,8 @@ export interface ReportOptions {
   readonly symbols: Symbols;
   /** keys of the works that describe the model; @default those of a single oscillator */
   readonly modelReferences?: readonly string[];
+  /** how the model defines its constants; @default the works say it */
+  readonly modelDefinition?: string;
 }
 
 /**
@@ -51,6 +53,9 @@ export interface ReportOptions {
 export function renderReport(document: FitDocument, options: ReportOptions): string {
   const { series } = document;
   const { symbols, notation, figures, commandLine, modelReferences = ["dunham1932", "herzberg1950"] } = options;
+  const { modelDefinition = null } = options;
+  // Levels that mix are listed instead: they have no well, no series of overtones to follow.
+  const simple = series.some(({ levels }) => levels === null);
   const citations = startCitations();
   const each = (write: (one: SeriesResult) => string) => perSeries(series, write);
   const side = (write: (all: readonly SeriesResult[]) => TableData) =>
@@ -72,11 +77,11 @@ export function renderReport(document: FitDocument, options: ReportOptions): str
       [...side(dissociationComparison), ...each((one) => table(dissociationTable(one))), SAFETY_LINE],
     ],
     ["Enthalpy of dissociation", tablesOf(series, thermochemistryTable)],
-    ["Derived numbers", each(derivedPart)],
-    ["Predictions", [...each(predictionsPart), LASER_LINE]],
-    ["Stability", each((one) => stabilityPart(one, symbols))],
+    ["Derived numbers", simple ? each(derivedPart) : []],
+    ["Predictions", simple ? [...each(predictionsPart), LASER_LINE] : []],
+    ["Stability", simple ? each((one) => stabilityPart(one, symbols)) : []],
     ["Figures", figures.length === 0 ? [] : [figuresSection(figures)]],
-    ["Methods", [methods({ document, notation, symbols, citations, modelReferences })]],
+    ["Methods", [methods({ document, notation, symbols, citations, modelReferences, modelDefinition })]],
     ["Warnings", warnings(document)],
     ["Reproduction", [reproduction(document, commandLine)]],
     ["References", [citations.list()]],
