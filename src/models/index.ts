@@ -1,4 +1,4 @@
 export { symmetricEigen } from "./eigen.ts";
 export * from "./list.ts";
-export type { Deperturbed, Manifold } from "./manifold.ts";
+export type { Manifold } from "./manifold.ts";
 export type * from "./model.ts";

@@ -350,6 +350,18 @@ describe("two unlike bonds", () => {
     expect(Math.abs(high!.energy - ((a + b) / 2 + half))).toBeLessThan(1e-9);
   });
 
+  it("fitted apart each bond takes the shift of its levels into its constants; without coupling there is none", () => {
+    const { consequences } = model.manifold!({ terms: null, fixed: {}, bonds: "unlike" });
+    const at = (p: readonly number[]) => Object.fromEntries(consequences(3).map(({ key, of }) => [key, of(p)]));
+    const free = at([3800, 80, 3700, 85, 0]);
+    // least squares through exact levels leaves rounding
+    expect(Math.abs(free.w1Apart! - 3800)).toBeLessThan(1e-8);
+    expect(Math.abs(free.wx2Apart! - 85)).toBeLessThan(1e-8);
+    const tied = at([3800, 80, 3700, 85, 12]);
+    expect(tied.w1Apart!).toBeGreaterThan(3800);
+    expect(tied.w2Apart!).toBeLessThan(3700);
+  });
+
   it("with equal constants gives the levels of two equivalent bonds", () => {
     const unlike = model.manifold!({ terms: null, fixed: {}, bonds: "unlike" })
       .levels([3870, 83, 3870, 83, -49.5], 5)

@@ -6,7 +6,7 @@ import { quarticOf } from "./normal-modes.ts";
 
 /** What follows from the constants: splittings, how local the bonds are, normal-mode constants, other conventions, Morse energies. */
 export function consequencesOf(options: ModelOptions, upTo: number): Consequence[] {
-  return options.bonds === "unlike" ? unlike() : equivalent(options, options.bonds ?? 2, upTo);
+  return options.bonds === "unlike" ? unlike(options, upTo) : equivalent(options, options.bonds ?? 2, upTo);
 }
 
 const item = (
@@ -78,8 +78,9 @@ function splittings(options: ModelOptions, bonds: number, upTo: number): Consequ
   });
 }
 
-function unlike(): Consequence[] {
+function unlike(options: ModelOptions, upTo: number): Consequence[] {
   return [
+    ...apart(options, Math.max(2, upTo)),
     item("detuning", "ν̃(1.0) − ν̃(0.1) without coupling", ([w1, wx1, w2, wx2]) => w1! - 2 * wx1! - (w2! - 2 * wx2!)),
     item(
       "mixing",
@@ -101,4 +102,36 @@ function unlike(): Consequence[] {
       "what fitting the bonds apart takes into their constants",
     ),
   ];
+}
+
+/** ω̃ and ω̃x of each bond as its own levels v.0 and 0.v give them when the coupling is forgotten. */
+function apart(options: ModelOptions, upTo: number): Consequence[] {
+  return [0, 1].flatMap((bond) => {
+    const constants = (p: readonly number[]) => {
+      const levels = levelsUpTo(options, keysOf(options), p, upTo);
+      let [a, b, c, s, t] = [0, 0, 0, 0, 0];
+      for (let v = 1; v <= upTo; v++) {
+        const { energy } = levels.find(({ label }) => label === (bond === 0 ? `${v}.0` : `0.${v}`))!;
+        const y = -v * (v + 1);
+        a += v * v;
+        b += v * y;
+        c += y * y;
+        s += v * energy;
+        t += y * energy;
+      }
+      const determinant = a * c - b * b;
+      return [(c * s - b * t) / determinant, (a * t - b * s) / determinant] as const;
+    };
+    return [
+      item(
+        `w${bond + 1}Apart`,
+        `ω̃${bond + 1}, apart`,
+        (p) => constants(p)[0],
+        bond === 0
+          ? `from the levels v.0 and 0.v up to V = ${upTo} each fitted alone, as if the bonds were not coupled`
+          : null,
+      ),
+      item(`wx${bond + 1}Apart`, `ω̃x${bond + 1}, apart`, (p) => constants(p)[1], null),
+    ];
+  });
 }
