@@ -16,6 +16,7 @@ import { followLimit } from "./near-limit/follow-limit.ts";
 import type { AnalysisOptions } from "./options.ts";
 import { predict } from "./predictions.ts";
 import { propagate } from "./propagation.ts";
+import { findResonances } from "./resonances.ts";
 import type { BandResult, Prediction, Quality, SeriesResult } from "./result.ts";
 import { type Solution, solve } from "./solution.ts";
 import { stabilityRows } from "./stability.ts";
@@ -63,6 +64,10 @@ export function analyse(measured: Series, model: Model, given: AnalysisOptions):
     thermochemistry: heat.thermochemistry,
     comparison: choice?.comparison ?? null,
     commonErrors: common.errors,
+    resonances:
+      options.modes.length === 0 || model.well === undefined
+        ? null
+        : findResonances(solution, model.well(p), options.modes, options.window),
     intervals: null,
     fitReport: {
       method: `${linear ? LINEAR_METHOD : NONLINEAR_METHOD}${options.robust === null ? "" : `, robust weights (${options.robust})`}`,
@@ -206,6 +211,7 @@ function bandResults({ series, model, options, used, fit, tests, treated, weight
       used: band.use,
       weight: weights === null ? null : of(weights),
       asRead: band.asRead,
+      twoLevels: band.twoLevels,
       note: band.note,
       phase: band.phase,
       place: band.place,

@@ -1,6 +1,7 @@
 import type { RobustKind, Treatment } from "../fitting/index.ts";
 import type { ModelOptions } from "../models/index.ts";
 import type { AirConditions } from "../quantity/index.ts";
+import type { Mode } from "./resonances.ts";
 
 export type IntervalKind = "linear" | "profile" | "resample";
 export type ExcessKind = "scatter" | "birge" | "none";
@@ -39,6 +40,10 @@ export interface AnalysisOptions extends ModelOptions {
   readonly air: AirConditions;
   /** an accepted D0 in cm-1 to compare with, with its standard uncertainty if known; null: none */
   readonly accepted: { readonly value: number; readonly sigma: number | null } | null;
+  /** other modes of the molecule, to look for resonances with; empty: none are looked for */
+  readonly modes: readonly Mode[];
+  /** a combination within this many cm-1 of an overtone is a candidate */
+  readonly window: number;
   /** the bond is the whole molecule: enthalpies at 298.15 K follow */
   readonly diatomic: boolean;
   /** an accepted ΔH°(298.15 K) in kJ/mol to compare with; null: none */

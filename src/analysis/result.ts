@@ -1,4 +1,4 @@
-import type { AsRead } from "../bands/index.ts";
+import type { AsRead, TwoLevels } from "../bands/index.ts";
 import type { Place, Warning } from "../messages/index.ts";
 import type { Quantity } from "../quantity/index.ts";
 import type { EmpiricalError } from "./empirical/empirical-error.ts";
@@ -20,6 +20,8 @@ export interface BandResult {
   /** weight in a robust fit, 1 = full; null otherwise */
   readonly weight: number | null;
   readonly asRead: AsRead;
+  /** where the position is corrected for a companion: both, and the coupling; cm-1 */
+  readonly twoLevels: TwoLevels | null;
   readonly note: string | null;
   readonly phase: string | null;
   readonly place: Place;
@@ -179,6 +181,44 @@ export interface Deperturbation {
   readonly naive: { readonly w: number; readonly wx: number } | null;
 }
 
+/** A combination near an overtone; cm-1. */
+export interface Resonance {
+  readonly band: string;
+  /** as text, such as "2 stretch + bend" */
+  readonly state: string;
+  readonly stretch: number;
+  /** quanta of the other modes, by name */
+  readonly modes: Readonly<Record<string, number>>;
+  /** harmonic sum above the ground state */
+  readonly position: number;
+  /** position less that of the overtone as fitted */
+  readonly gap: number;
+  /** from the stated uncertainties of the modes; null where one has none */
+  readonly gapUncertainty: number | null;
+  /** stretch quanta traded and quanta gained */
+  readonly order: number;
+  /** of the overtone in the fit; null where it was not used */
+  readonly residual: number | null;
+  /** the band stands out, and in the direction this level would push it */
+  readonly matched: boolean;
+}
+
+/** What could perturb the overtones, with --modes. */
+export interface Resonances {
+  readonly window: number;
+  /** the band that stands out in the fit, if one does */
+  readonly standsOut: string | null;
+  /** matched ones first, then by closeness and order */
+  readonly candidates: readonly Resonance[];
+  /** the band that would test the first: an overtone where the same trade comes closer, or the dark level beside its band */
+  readonly test: {
+    readonly label: string;
+    readonly position: number;
+    readonly gap: number;
+    readonly kind: "overtone" | "companion";
+  } | null;
+}
+
 /** D0 as an enthalpy of dissociation at 298.15 K, of a bond that is a whole molecule; kJ/mol. */
 export interface Thermochemistry {
   /** K */
@@ -242,6 +282,8 @@ export interface SeriesResult {
   /** with --terms auto: the numbers of terms compared; otherwise null */
   readonly comparison: readonly ComparisonRow[] | null;
   readonly commonErrors: readonly CommonError[];
+  /** null unless modes were given */
+  readonly resonances: Resonances | null;
   /** of models whose states mix; null for others */
   readonly levels: readonly LevelResult[] | null;
   readonly consequences: readonly ConsequenceResult[];

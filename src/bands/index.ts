@@ -6,3 +6,4 @@ export { rowsFromPeaks, withoutLabels } from "./read-peaks.ts";
 export type * from "./series.ts";
 export { mergeSettings, type Setting, type Settings } from "./settings.ts";
 export { toSeries, type Understood } from "./to-series.ts";
+export type { TwoLevels } from "./two-levels.ts";

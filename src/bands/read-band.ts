@@ -7,6 +7,7 @@ import { canonicalLabel } from "./label.ts";
 import type { ColumnName, RawRow } from "./raw.ts";
 import type { Laser } from "./read-shared.ts";
 import type { Band } from "./series.ts";
+import { separate } from "./two-levels.ts";
 
 /** A band, and whether its air wavelength lies beyond the dispersion formula. */
 export interface ReadBand {
@@ -77,21 +78,46 @@ export function readBand(
       what: "the companion stands where the band stands",
       mend: "give the position of the weaker band of the pair",
     });
+  if ((companion === null) !== (ratio === null))
+    return wrong(ratio === null ? "ratio" : "companion", {
+      code: ratio === null ? "companion-without-ratio" : "ratio-without-companion",
+      what:
+        ratio === null
+          ? "a companion is given, but not the ratio of intensities"
+          : "a ratio of intensities is given, but no companion",
+      mend:
+        ratio === null
+          ? "write band over companion in the column ratio, such as 6.7 or 6.7(3), or leave the companion out"
+          : "write the position of the companion in the column companion, or leave the ratio out",
+    });
   /** A wavenumber as measured, as the position of a band. */
   const shift = (wavenumber: number) => (context.laser === null ? wavenumber : context.laser.wavenumber - wavenumber);
+  const twoLevels =
+    companion === null || ratio === null
+      ? null
+      : separate({
+          band: shift(position.wavenumber),
+          bandSigma: sigma?.value ?? null,
+          companion: shift(companion.wavenumber),
+          companionSigma:
+            companion.stated === null
+              ? null
+              : companion.stated.value * Math.abs(rate(companion.wavenumber, unit, footing)),
+          ratio: ratio.value,
+          ratioSigma: ratio.sigma,
+        });
   return {
     extrapolated: position.extrapolated,
     absolute: position.wavenumber,
     band: {
       label,
-      position: shift(position.wavenumber),
-      sigma: sigma?.value ?? null,
+      position: twoLevels?.corrected ?? shift(position.wavenumber),
+      sigma: twoLevels === null ? (sigma?.value ?? null) : twoLevels.sigma,
       isotopologue,
       use,
       phase: cells.phase ?? context.phase,
       group: cells.group ?? null,
-      companion: companion === null ? null : shift(companion.wavenumber),
-      ratio,
+      twoLevels,
       note: cells.note ?? null,
       place,
       asRead: { text: cells.position!, unit, medium, sigmaText: sigma?.text ?? null },
@@ -181,9 +207,9 @@ function useFrom(text: string): boolean | Wrong {
   return { code: "use", what: `"${text}" is neither yes nor no`, mend: "write yes or no" };
 }
 
-function ratioFrom(text: string): number | Wrong {
+function ratioFrom(text: string): { value: number; sigma: number | null } | Wrong {
   const read = readMeasurement(text);
-  if (read.ok && read.value > 0) return read.value;
+  if (read.ok && read.value > 0) return { value: read.value, sigma: read.sigma };
   return {
     code: "ratio",
     what: `"${text}" is not a positive intensity ratio`,

@@ -1,5 +1,6 @@
 import type { Place, Warning } from "../messages/index.ts";
 import type { Bond } from "../species/index.ts";
+import type { TwoLevels } from "./two-levels.ts";
 
 export type Medium = "vacuum" | "air";
 
@@ -23,9 +24,8 @@ export interface Band {
   readonly use: boolean;
   readonly phase: string | null;
   readonly group: string | null;
-  /** Position (cm-1, vacuum) of a weak companion and the intensity ratio band/companion, where given. */
-  readonly companion: number | null;
-  readonly ratio: number | null;
+  /** Where a companion and the ratio of intensities were given: `position` is corrected by them. */
+  readonly twoLevels: TwoLevels | null;
   readonly note: string | null;
   readonly place: Place;
   readonly asRead: AsRead;

@@ -56,6 +56,8 @@ export const settingNames: readonly string[] = [
   "limits",
   "expect",
   "robust",
+  "modes",
+  "window",
   "share",
   "compare",
   "correlation",

@@ -8,7 +8,7 @@ import type { Series } from "./series.ts";
 import type { Settings } from "./settings.ts";
 import { groupWithoutBands, sharedParts } from "./shared-parts.ts";
 import { phaseFaults, repeatChecks } from "./validate.ts";
-import { aboutAir, aboutBond, aboutMeaning, aboutSigma } from "./warnings.ts";
+import { aboutAir, aboutBond, aboutCompanions, aboutMeaning, aboutSigma } from "./warnings.ts";
 
 /** Bands on a common footing, one series a name. */
 export interface Understood {
@@ -74,6 +74,7 @@ function oneSeries(
     warnings: [
       ...warnings,
       ...aboutSigma(used),
+      ...aboutCompanions(used),
       ...aboutMeaning(used, context.meaning),
       ...aboutBond(bond, context.bond),
       ...aboutAir(read.filter(({ extrapolated }) => extrapolated).map(({ band }) => band)),

@@ -48,6 +48,21 @@ export function aboutAir(beyond: readonly Band[]): Warning[] {
   ];
 }
 
+/** Bands corrected for a companion: what that rests on. */
+export function aboutCompanions(used: readonly Band[]): Warning[] {
+  return used.flatMap(({ label, twoLevels: pair }) =>
+    pair === null
+      ? []
+      : [
+          {
+            code: "companion-corrected",
+            message: `${label} is moved by ${pair.shift.toFixed(2)} cm-1 to ${pair.corrected.toFixed(2)}, away from its companion's repulsion (coupling ${pair.coupling.toFixed(2)} cm-1): that holds for two levels only of which the dark one carries no intensity of its own, else the ratio misleads; ${pair.ratioSigma === null ? "the ratio counts as exact, write 6.7(3) with its uncertainty; " : ""}compare with the fit without ${label}`,
+            about: label,
+          },
+        ],
+  );
+}
+
 /** The labels of some bands, the first eight by name. */
 function labels(bands: readonly Band[]): string {
   const shown = bands.slice(0, 8).map(({ label }) => label);

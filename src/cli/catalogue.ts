@@ -26,6 +26,8 @@ export interface Entry {
 const bands = { title: "Bands:", flags: bandFlags };
 const molecule = { title: "Molecule:", flags: moleculeFlags };
 const fitting = { title: "Fit:", flags: fitFlags };
+/** A plan has windows of its own. */
+const planFitting = { title: "Fit:", flags: fitFlags.filter(({ name }) => name !== "window" && name !== "modes") };
 const common = { title: "Output:", flags: commonFlags };
 
 export const catalogue: readonly Entry[] = [
@@ -74,7 +76,7 @@ export const catalogue: readonly Entry[] = [
     name: "plan",
     summary: "which band to measure next, and where to look for it",
     argument: "[FILE]",
-    groups: [{ title: "Plan:", flags: planFlags }, bands, molecule, fitting, common],
+    groups: [{ title: "Plan:", flags: planFlags }, bands, molecule, planFitting, common],
     examples: [
       'rungwise plan --series "2885.98 5667.98" --sigma 0.02 --aim wexe',
       'rungwise plan --series "2885.98 5667.98" --sigma 0.02 --aim d0 --up-to 7',

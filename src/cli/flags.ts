@@ -113,6 +113,12 @@ export const fitFlags: readonly Flag[] = [
     help: "hold constants; with an uncertainty, weye=0.22(1), it is one more observation",
   },
   {
+    name: "modes",
+    value: '"bend 1370, …"',
+    help: "other modes in cm-1: combinations near the overtones are looked for",
+  },
+  { name: "window", value: "CM-1", help: "how far from an overtone they may lie (default 50)" },
+  {
     name: "share",
     value: "KEY",
     help: 'constant common to all series, such as wexe, or "wexe±0.5": alike to 0.5 cm-1',

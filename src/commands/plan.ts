@@ -7,7 +7,7 @@ import { type FitRequest, requestSettings } from "./request.ts";
 import { tool } from "./tool.ts";
 
 /** What `plan` may be told: bands as for `fit`, and what is to become better known. */
-export interface PlanRequest extends FitRequest {
+export interface PlanRequest extends Omit<FitRequest, "window" | "modes"> {
   /** "we", "wexe", … ; "d0"; "prediction:7-0"; "model" */
   readonly aim?: string;
   /** standard uncertainty of the new band, "0.02" cm-1 or "0.01 nm"; @default the median of those stated */

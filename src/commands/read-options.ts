@@ -88,6 +88,8 @@ export async function readOptions(
     scatter: reader.number("scatter", positive, "write the added scatter in cm-1, such as 0.3"),
     coverage: reader.number("coverage", (x) => x > 0 && x < 1, "write a probability between 0 and 1, such as 0.99"),
     shared: null,
+    modes: readModes(reader, model),
+    window: reader.number("window", positive, "write how far from an overtone to look, in cm-1, such as 50") ?? 50,
     groups: reader.choice("groups", ["carried", "fitted"], "carried"),
     robust: settings.has("robust") ? reader.choice<RobustKind>("robust", ["tukey", "huber"], "tukey") : null,
     intervals: reader.choice<IntervalKind>("intervals", ["linear", "profile", "resample"], "linear"),
@@ -103,6 +105,14 @@ export async function readOptions(
     alphaE: reader.number("alpha-e", Number.isFinite, "write αe in cm-1, such as 0.307"),
     re: reader.number("re", positive, "write re in Å, such as 1.2746"),
   };
+  const window = settings.get("window");
+  if (window !== undefined && analysis.modes.length === 0 && !settings.has("modes"))
+    reader.fault(
+      window,
+      "window-without-modes",
+      "there are no modes to look for",
+      'name them with --modes "bend 1370, rock 1020(5)"',
+    );
   const enthalpy = settings.get("accepted-enthalpy");
   if (enthalpy !== undefined && !analysis.diatomic)
     reader.fault(
@@ -157,6 +167,55 @@ function readAccepted(
     return reader.fault(setting, "unknown-unit", `${own} is no unit of a dissociation energy`, mend);
   const convert = (x: number) => (own === null ? x : fromWavenumber(toWavenumber(x, own), unit));
   return { value: convert(read.value), sigma: read.sigma === null ? null : convert(read.sigma) };
+}
+
+/** `--modes "bend 1370, rock 1020(5)"`: names and wavenumbers in cm-1, by commas, semicolons or newlines. */
+function readModes(reader: Reader, model: Model | null): AnalysisOptions["modes"] {
+  const setting = reader.settings.get("modes");
+  if (setting === undefined) return [];
+  if (model !== null && model.well === undefined) {
+    reader.fault(
+      setting,
+      "modes-of-another-model",
+      `the model ${model.name} has no overtones to be perturbed`,
+      "leave --modes out, or fit --model oscillator",
+    );
+    return [];
+  }
+  const names = new Set<string>();
+  const modes = setting.value
+    .split(/[,;\n]+/)
+    .filter((part) => part.trim() !== "")
+    .flatMap((part) => {
+      const [, name = "", number = ""] = /^\s*(\S.*?)\s+(\S+)\s*$/.exec(part) ?? [];
+      const read = readMeasurement(number);
+      if (name === "" || !read.ok || !(read.value > 0)) {
+        reader.fault(
+          setting,
+          "modes",
+          `"${part.trim()}" is no mode`,
+          'write a name and its wavenumber in cm-1, such as "bend 1370, rock 1020(5)"',
+        );
+        return [];
+      }
+      if (names.has(name))
+        reader.fault(
+          setting,
+          "mode-twice",
+          `the mode "${name}" stands there twice`,
+          "give each mode once, by a name of its own",
+        );
+      names.add(name);
+      return [{ name, wavenumber: read.value, sigma: read.sigma }];
+    });
+  if (modes.length > 12)
+    reader.fault(
+      setting,
+      "too-many-modes",
+      `${modes.length} modes are too many to combine`,
+      "give the twelve that matter most",
+    );
+  return modes;
 }
 
 function readAirConditions(reader: Reader): AirConditions {

@@ -63,6 +63,10 @@ export interface FitRequest {
   readonly bend?: string;
   /** constants held, such as "weye=0.22"; with an uncertainty one more observation */
   readonly fix?: string;
+  /** other modes of the molecule to look for resonances with, such as "bend 1370, rock 1020(5)" cm-1 */
+  readonly modes?: string;
+  /** how far from an overtone a combination may lie, cm-1; @default 50 */
+  readonly window?: Word;
   /** a constant common to all series, "wexe", or alike within a standard deviation, "wexe±0.5" */
   readonly share?: string;
   /** constants from elsewhere to compare with, such as "we=2990.9463(5) wexe=52.8186(9)" */

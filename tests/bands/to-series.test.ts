@@ -150,8 +150,14 @@ describe("rows become series", () => {
     const text =
       "band,position,unit,use,companion,ratio,group,note,phase\n3-0,1000,nm,NO,1250,6.7,laser,weak,gas\n1-0,3527,,Yes,,,,,\n";
     const [dark, bright] = (await understand(text)).series[0]!.bands;
-    expect(dark).toMatchObject({ use: false, companion: 8000, ratio: 6.7, group: "laser", note: "weak", phase: "gas" });
-    expect(bright).toMatchObject({ use: true, companion: null, ratio: null, group: null, note: null, phase: null });
+    expect(dark).toMatchObject({
+      use: false,
+      twoLevels: { companion: 8000, ratio: 6.7 },
+      group: "laser",
+      note: "weak",
+      phase: "gas",
+    });
+    expect(bright).toMatchObject({ use: true, twoLevels: null, group: null, note: null, phase: null });
   });
 
   it("the same band twice within five combined σ is a repeated measurement, and said", () => {

@@ -51,6 +51,18 @@ describe("the schemas describe every key of the documents, and no document has a
         fix: "gbb=5",
       },
     ],
+    [
+      "resonances and a companion",
+      {
+        input: {
+          text: "band,position,sigma,companion,ratio\n1-0,3527.37,0.03,,\n2-0,6881.26,0.05,,\n3-0,10057.756,0.1,10086.006,6.7(3)\n4-0,13068.33,0.17,,\n",
+          source: "b.csv",
+          format: "csv" as const,
+        },
+        modes: "bend 1370, rock 1020(5)",
+        window: 100,
+      },
+    ],
     ["groups and a mixture", { ...hcl, bond: "H Cl", sharedSigma: 0.01 }],
     ["a file of two bonds with excluded bands", { input: file("demo/bonds-a-and-b.csv") }],
     ["levels refused as not near the limit", { input: file("h2.csv"), model: "near-limit", power: 6 }],

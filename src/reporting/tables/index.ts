@@ -1,5 +1,6 @@
 export { bandsTable, exclusions } from "./bands.ts";
 export { commonErrorsTable } from "./common-errors.ts";
+export { companionsTable } from "./companions.ts";
 export { constantsComparison, dissociationComparison, termsTable } from "./comparison.ts";
 export { constantsTable, correlation } from "./constants.ts";
 export { derivedTable } from "./derived.ts";
@@ -8,5 +9,6 @@ export { dissociationTable, SAFETY_LINE } from "./dissociation.ts";
 export { consequencesTable, deperturbationTable, levelsTable } from "./levels.ts";
 export { LASER_LINE, predictionsTable } from "./predictions.ts";
 export { qualityEntries } from "./quality.ts";
+export { resonancesTable } from "./resonances.ts";
 export { stabilityTable } from "./stability.ts";
 export { thermochemistryTable } from "./thermochemistry.ts";

@@ -3,6 +3,7 @@ import { type Symbols, symbolOf } from "../symbols.ts";
 import {
   bandsTable,
   commonErrorsTable,
+  companionsTable,
   consequencesTable,
   constantsTable,
   correlation,
@@ -14,6 +15,7 @@ import {
   levelsTable,
   predictionsTable,
   qualityEntries,
+  resonancesTable,
   SAFETY_LINE,
   stabilityTable,
   termsTable,
@@ -33,6 +35,8 @@ export function renderSeries(series: SeriesResult, symbols: Symbols, paint: Pain
   const terms = termsTable(series);
   const derived = derivedTable(series);
   const common = commonErrorsTable(series);
+  const resonances = resonancesTable(series);
+  const companions = companionsTable(series);
   const levels = levelsTable(series.levels);
   const follows = consequencesTable(series);
   const deperturbed = deperturbationTable(series);
@@ -43,6 +47,8 @@ export function renderSeries(series: SeriesResult, symbols: Symbols, paint: Pain
     section("Constants", [constantsTable(series, symbols), correlation(series, symbols)], paint),
     terms === null ? null : section("Number of terms", [terms], paint),
     section("Bands", [bandsTable(series), ...exclusions(series)], paint),
+    companions === null ? null : section("Bands with a companion", [companions], paint),
+    resonances === null ? null : section("Near-degeneracies", [resonances], paint),
     common === null ? null : section("Errors in common", [common], paint),
     levels === null ? null : section("Levels", [levels], paint),
     deperturbed === null ? null : section("Overtones without the mixing", [deperturbed], paint),
