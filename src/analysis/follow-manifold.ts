@@ -1,5 +1,5 @@
 import type { Warning } from "../messages/index.ts";
-import type { Manifold } from "../models/index.ts";
+import { fitLocalMode, type Manifold } from "../models/index.ts";
 import { row } from "./dissociation/row.ts";
 import { type Propagation, propagate } from "./propagation.ts";
 import type { ConsequenceResult, Deperturbation, DissociationRow, LevelResult } from "./result.ts";
@@ -105,24 +105,8 @@ function deperturbationOf(
   return {
     overtones: overtones.map(({ v, strongest }) => ({ v, deperturbed: quantity(position(v)), strongest })),
     constants: { w: quantity(own("omega")), wx: quantity(own("omegaX")) },
-    naive: naive(overtones.map(({ v, strongest }) => [v, strongest.energy] as const)),
+    naive: fitLocalMode(overtones.map(({ v, strongest }) => [v, strongest.energy] as const)),
   };
-}
-
-/** Least squares of ν = v·ω̃ - v(v+1)·ω̃x through levels read as overtones. */
-function naive(points: readonly (readonly [number, number])[]): { w: number; wx: number } | null {
-  if (points.length < 2) return null;
-  let [a, b, c, s, t] = [0, 0, 0, 0, 0];
-  for (const [v, energy] of points) {
-    const y = -v * (v + 1);
-    a += v * v;
-    b += v * y;
-    c += y * y;
-    s += v * energy;
-    t += y * energy;
-  }
-  const determinant = a * c - b * b;
-  return { w: (c * s - b * t) / determinant, wx: (a * t - b * s) / determinant };
 }
 
 function atFaceValue({ used, sigmaKnown, options }: Solution, applied: boolean): Warning[] {

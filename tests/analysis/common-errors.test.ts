@@ -3,6 +3,7 @@ import { describe, expect, it } from "vitest";
 import { fit } from "../../src/commands/fit.ts";
 import type { FitRequest } from "../../src/commands/request.ts";
 import { InputError } from "../../src/messages/index.ts";
+import { normalEquations } from "./normal-equations.ts";
 
 const csv = (text: string, more: Partial<FitRequest> = {}): FitRequest => ({
   input: { text, source: "bands.csv", format: "csv" },
@@ -31,7 +32,7 @@ describe("groups of bands with errors of their own", () => {
     const right = [1, 2, 3, 4, 5, 6].map((v, i) => (position(v) + (v > 2 ? 0.4 : 0) + noise[i]!) / 0.05);
     rows.push([0, 0, 1 / 0.3]);
     right.push(0);
-    const { solution, inverse } = normal(rows, right);
+    const { solution, inverse } = normalEquations(rows, right);
     const laser = fitted.commonErrors.find(({ group }) => group === "laser")!;
     // normal equations with a condition number near 1e6 keep nine digits
     expect(Math.abs(laser.shift!.value - solution[2]!)).toBeLessThan(1e-7);
@@ -186,23 +187,3 @@ describe("Raman: scattered wavelengths with --laser", () => {
     expect((error as InputError).faults.map((fault) => fault.code)).toEqual([code]);
   });
 });
-
-/** Normal equations, solved and inverted by Gauss–Jordan. */
-function normal(rows: readonly number[][], right: readonly number[]) {
-  const size = rows[0]!.length;
-  const work = Array.from({ length: size }, (_, i) => [
-    ...Array.from({ length: size }, (_, j) => rows.reduce((sum, row) => sum + row[i]! * row[j]!, 0)),
-    ...Array.from({ length: size }, (_, j) => (i === j ? 1 : 0)),
-    rows.reduce((sum, row, k) => sum + row[i]! * right[k]!, 0),
-  ]);
-  for (let k = 0; k < size; k++) {
-    const pivot = work[k]![k]!;
-    work[k] = work[k]!.map((x) => x / pivot);
-    for (let i = 0; i < size; i++)
-      if (i !== k) {
-        const factor = work[i]![k]!;
-        work[i] = work[i]!.map((x, j) => x - factor * work[k]![j]!);
-      }
-  }
-  return { solution: work.map((row) => row.at(-1)!), inverse: work.map((row) => row.slice(size, 2 * size)) };
-}

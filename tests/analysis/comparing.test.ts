@@ -4,6 +4,7 @@ import { fit } from "../../src/commands/fit.ts";
 import type { FitRequest } from "../../src/commands/request.ts";
 import { InputError } from "../../src/messages/index.ts";
 import { generator } from "./ladders.ts";
+import { invert, normalEquations } from "./normal-equations.ts";
 
 const file = (text: string) => ({ text, source: "bands.csv", format: "csv" as const });
 const positions = (w: number, x: number, levels: readonly number[], noise: () => number = () => 0) =>
@@ -15,37 +16,6 @@ const table = (series: Readonly<Record<string, readonly (readonly [number, numbe
       bands.map(([v, position]) => `${name},${v}-0,${position},${sigma}`),
     ),
   ].join("\n");
-
-/** Solve and invert normal equations by Gauss–Jordan. */
-function normal(rows: readonly number[][], right: readonly number[]) {
-  const n = rows[0]!.length;
-  const work = Array.from({ length: n }, (_, i) => [
-    ...Array.from({ length: n }, (_, j) => rows.reduce((sum, row) => sum + row[i]! * row[j]!, 0)),
-    ...Array.from({ length: n }, (_, j) => Number(i === j)),
-    rows.reduce((sum, row, k) => sum + row[i]! * right[k]!, 0),
-  ]);
-  for (let k = 0; k < n; k++) {
-    const pivot = work[k]![k]!;
-    work[k] = work[k]!.map((x) => x / pivot);
-    for (let i = 0; i < n; i++)
-      if (i !== k) {
-        const factor = work[i]![k]!;
-        work[i] = work[i]!.map((x, j) => x - factor * work[k]![j]!);
-      }
-  }
-  return { solution: work.map((row) => row.at(-1)!), inverse: work.map((row) => row.slice(n, 2 * n)) };
-}
-
-/** Rows whose normal equations are V⁻¹'s inverse: the transposed Cholesky factor, so that RᵀR = V. */
-function cholesky(v: readonly number[][]): number[][] {
-  const lower = v.map((row) => row.map(() => 0));
-  for (let j = 0; j < v.length; j++)
-    for (let i = j; i < v.length; i++) {
-      const rest = v[i]![j]! - lower[i]!.slice(0, j).reduce((sum, x, k) => sum + x * lower[j]![k]!, 0);
-      lower[i]![j] = i === j ? Math.sqrt(rest) : rest / lower[j]![j]!;
-    }
-  return lower.map((_, i) => lower.map((row) => row[i]!));
-}
 
 describe("differences between series", () => {
   it("of independent series: the difference, and the root of the sum of squares", async () => {
@@ -86,7 +56,7 @@ describe("differences between series", () => {
     const weights = Object.values(bands).map((all) => {
       const x = all.map(([v]) => [v, -v * (v + 1)]);
       const v = all.map((_, i) => all.map((__, j) => (i === j ? 0.01 : 0) + 0.04));
-      const inverse = normal(cholesky(v), new Array<number>(v.length).fill(0)).inverse;
+      const inverse = invert(v);
       const xv = [0, 1].map((k) => inverse.map((row) => row.reduce((sum, c, j) => sum + c * x[j]![k]!, 0)));
       const gram = xv.map((row) => [0, 1].map((k) => row.reduce((sum, c, i) => sum + c * x[i]![k]!, 0)));
       const det = gram[0]![0]! * gram[1]![1]! - gram[0]![1]! ** 2;
@@ -168,7 +138,7 @@ describe("a constant shared between series", () => {
             right.push(position / 0.1);
           }
         });
-        const { solution, inverse } = normal(rows, right);
+        const { solution, inverse } = normalEquations(rows, right);
         series.forEach(({ constants }, i) => {
           // normal equations with condition numbers near 1e6 keep nine digits
           expect(Math.abs(constants.we!.value - solution[i]!)).toBeLessThan(1e-6);
@@ -192,7 +162,7 @@ describe("a constant shared between series", () => {
       ...bonds.a.map(([v]) => [v / 0.1, 0, (-v * (v + 1)) / 0.1]),
       ...bonds.b.map(([v]) => [0, v / 0.1, (-v * (v + 1)) / 0.1]),
     ];
-    const { inverse } = normal(
+    const { inverse } = normalEquations(
       rows,
       [...bonds.a, ...bonds.b].map(([, position]) => position / 0.1),
     );

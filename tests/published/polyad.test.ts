@@ -7,6 +7,7 @@ import { InputError } from "../../src/messages/index.ts";
 import { findModel, type Model } from "../../src/models/index.ts";
 import { couplingElement } from "../../src/models/polyad/blocks.ts";
 import { generator } from "../analysis/ladders.ts";
+import { solveLinear } from "../analysis/normal-equations.ts";
 
 const model = (await findModel("polyad")) as Model;
 const options = { terms: null, fixed: {} } as const;
@@ -174,9 +175,7 @@ describe("derivatives and fits", () => {
       ).series[0]!;
       expect(fitReport.converged).toBe(true);
       const d = Object.values(constants).map(({ value }, k) => (k === 6 ? Math.abs(value) : value) - P[k]!);
-      const inverse = new Matrix(covariance!.map((row) => [...row]));
-      const solved = new Matrix(inverse).to2DArray();
-      const x = solve(solved, d);
+      const x = solveLinear(covariance!, d);
       const chi = d.reduce((total, value, k) => total + value * x[k]!, 0);
       sum += chi;
       squares += chi * chi;
@@ -259,18 +258,3 @@ describe("derivatives and fits", () => {
     });
   });
 });
-
-function solve(a: readonly (readonly number[])[], b: readonly number[]): number[] {
-  const work = a.map((row, i) => [...row, b[i]!]);
-  const n = b.length;
-  for (let k = 0; k < n; k++) {
-    const pivot = work[k]![k]!;
-    work[k] = work[k]!.map((x) => x / pivot);
-    for (let i = 0; i < n; i++)
-      if (i !== k) {
-        const factor = work[i]![k]!;
-        work[i] = work[i]!.map((x, j) => x - factor * work[k]![j]!);
-      }
-  }
-  return work.map((row) => row[n]!);
-}

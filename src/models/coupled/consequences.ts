@@ -1,3 +1,4 @@
+import { fitLocalMode } from "../local-mode-fit.ts";
 import type { Consequence } from "../manifold.ts";
 import type { ModelOptions } from "../model.ts";
 import { keysOf } from "./constants.ts";
@@ -109,29 +110,22 @@ function apart(options: ModelOptions, upTo: number): Consequence[] {
   return [0, 1].flatMap((bond) => {
     const constants = (p: readonly number[]) => {
       const levels = levelsUpTo(options, keysOf(options), p, upTo);
-      let [a, b, c, s, t] = [0, 0, 0, 0, 0];
-      for (let v = 1; v <= upTo; v++) {
+      const points = Array.from({ length: upTo }, (_, i) => i + 1).map((v) => {
         const { energy } = levels.find(({ label }) => label === (bond === 0 ? `${v}.0` : `0.${v}`))!;
-        const y = -v * (v + 1);
-        a += v * v;
-        b += v * y;
-        c += y * y;
-        s += v * energy;
-        t += y * energy;
-      }
-      const determinant = a * c - b * b;
-      return [(c * s - b * t) / determinant, (a * t - b * s) / determinant] as const;
+        return [v, energy] as const;
+      });
+      return fitLocalMode(points)!;
     };
     return [
       item(
         `w${bond + 1}Apart`,
         `ω̃${bond + 1}, apart`,
-        (p) => constants(p)[0],
+        (p) => constants(p).w,
         bond === 0
           ? `from the levels v.0 and 0.v up to V = ${upTo} each fitted alone, as if the bonds were not coupled`
           : null,
       ),
-      item(`wx${bond + 1}Apart`, `ω̃x${bond + 1}, apart`, (p) => constants(p)[1], null),
+      item(`wx${bond + 1}Apart`, `ω̃x${bond + 1}, apart`, (p) => constants(p).wx, null),
     ];
   });
 }

@@ -7,17 +7,22 @@ import { GREY, SIZE, seriesStyle } from "./style.ts";
 import { quotient, SYMBOL, UNIT } from "./symbols.ts";
 import { paddedRange } from "./ticks.ts";
 
+/** Distance between levels of one polyad, in units of N. */
+const SIDE = 0.07;
+
 /** Observed minus calculated levels by total quanta or polyad, species (or place in the polyad) apart; null for other models. */
 export function levelResidualsFigure(series: SeriesResult, options: FigureOptions, name: string): FigureSpec | null {
   const { levels, bands } = series;
   if (levels === null) return null;
+  const polyads = levels.some(({ N }) => N !== undefined);
   const kinds = [...new Set(levels.map(({ species, l }) => species ?? (l === undefined ? "" : `l = ${l}`)))].sort();
   const shown = bands.flatMap(({ label, residual, standardUncertainty: u, used }) => {
     const level = levels.find((one) => one.label === label.split(/\s+from\s+/i)[0]);
     if (level === undefined || residual === null || !used) return [];
     return [
       {
-        block: blockOf(level),
+        // Levels of a polyad side by side, in their order.
+        block: blockOf(level) + (level.j === undefined ? 0 : SIDE * (1 - level.j)),
         kind: kinds.indexOf(level.species ?? (level.l === undefined ? "" : `l = ${level.l}`)),
         residual,
         u,
@@ -53,7 +58,7 @@ export function levelResidualsFigure(series: SeriesResult, options: FigureOption
         filled: true,
         sizePt: SIZE.marker,
         points: of.map(({ block, residual, u }) => ({
-          x: block + (i - (present.length - 1) / 2) * 0.14,
+          x: block + (polyads ? 0 : (i - (present.length - 1) / 2) * 0.14),
           y: residual,
           ...(u === null ? {} : { yError: u }),
         })),
@@ -66,7 +71,7 @@ export function levelResidualsFigure(series: SeriesResult, options: FigureOption
       name,
       widthMm: options.widthMm,
       heightMm: heightFor(options.widthMm, 0.8),
-      caption: `Observed less calculated levels of ${series.name} by ${levels.some(({ N }) => N !== undefined) ? "polyad number N" : "total quanta V"}; ${shown.some(({ u }) => u !== null) ? "bars: stated standard uncertainties" : "no uncertainties were stated"}.`,
+      caption: `Observed less calculated levels of ${series.name} by ${polyads ? "polyad number N, the levels of a polyad side by side with the highest on the right" : "total quanta V"}; ${shown.some(({ u }) => u !== null) ? "bars: stated standard uncertainties" : "no uncertainties were stated"}.`,
       alt: `Residuals of ${shown.length} levels; the largest is ${Math.max(...shown.map(({ residual }) => Math.abs(residual))).toPrecision(2)} cm⁻¹.`,
     },
     [
