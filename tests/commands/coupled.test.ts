@@ -100,3 +100,40 @@ describe("coupled bonds", () => {
     await expect(predict({ series: "2886 5668", predictBond: "16O 2H" })).rejects.toBeInstanceOf(InputError);
   });
 });
+
+describe("levels from constants and from a stored result", () => {
+  it("two unlike bonds: each constant goes where its name says", async () => {
+    const constants = "w1=3800 wx1=80 w2=3700 wx2=85 lambda=0";
+    const { levels } = await predict({ model: "coupled", bonds: "unlike", constants, upTo: 1 });
+    const energies = Object.fromEntries(levels!.map(({ label, energy }) => [label, energy]));
+    // w - 2·wx of each
+    expect(energies).toEqual({ "1.0": 3640, "0.1": 3530 });
+  });
+
+  it("a stored result keeps the number of bonds: the levels of the fit", async () => {
+    const request: FitRequest = {
+      model: "coupled",
+      bonds: 3,
+      bands: "100A1 2115.16, 100E 2126.43, 200A1 4166.77, 200E 4167.94",
+      upTo: 2,
+    };
+    const document = await fit(request);
+    const { levels } = await predict({ stored: { text: JSON.stringify(document), source: "result.json" }, upTo: 2 });
+    expect(levels!.map(({ label, energy }) => [label, energy])).toEqual(
+      document.series[0]!.levels!.map(({ label, energy }) => [label, energy]),
+    );
+  });
+
+  it("with --bond, constants too are scaled to another isotope", async () => {
+    const request = {
+      model: "coupled",
+      bonds: 2,
+      constants: "w=3853.6 wx=78.72 lambda=-41.88",
+      bond: "16O 1H",
+      predictBond: "16O 2H",
+      upTo: 1,
+    };
+    const { levels } = await predict(request);
+    expect(levels![0]!.energy).toBeLessThan(2800);
+  });
+});
