@@ -5,7 +5,7 @@ export { manifoldAt } from "./follow-manifold.ts";
 export { changeForm, type Form, forms } from "./forms/forms.ts";
 export { labelsWithin } from "./near-limit/levels.ts";
 export type { AnalysisOptions, ExcessKind, IntervalKind } from "./options.ts";
-export { type Aim, type Plan, type PlanOptions, planNext } from "./plan/plan.ts";
+export { type Aim, type Plan, type PlanOptions, planKnown, planNext } from "./plan/plan.ts";
 export { predict } from "./predictions.ts";
 export type { Propagation } from "./propagation.ts";
 export type * from "./result.ts";

@@ -204,6 +204,7 @@ export const assignFlags: readonly Flag[] = [
 ];
 
 export const planFlags: readonly Flag[] = [
+  { name: "constants", value: '"we=… wexe=…"', help: "constants in place of bands (also FILE.json of a report)" },
   { name: "aim", value: "WHAT", help: "what is to become better known: we, wexe, weye, d0, prediction:7-0 or model" },
   {
     name: "sigma-new",

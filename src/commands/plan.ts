@@ -1,13 +1,14 @@
-import { type Aim, type Plan, type PlanOptions, planNext } from "../analysis/index.ts";
+import { type Aim, type Plan, type PlanOptions, planKnown, planNext } from "../analysis/index.ts";
 import { readVibrationalLabel, type Setting } from "../bands/index.ts";
 import { type Fault, InputError, type Warning } from "../messages/index.ts";
 import { isWavelength, readMeasurement, splitUnit, toWavenumber } from "../quantity/index.ts";
 import { gather } from "./gather.ts";
+import { type SourceRequest, sourcesOf } from "./prediction-sources.ts";
 import { type FitRequest, requestSettings } from "./request.ts";
 import { tool } from "./tool.ts";
 
-/** What `plan` may be told: bands as for `fit`, and what is to become better known. */
-export interface PlanRequest extends Omit<FitRequest, "window" | "modes"> {
+/** What `plan` may be told: bands, constants or a stored result as for `predict`, and what is to become better known. */
+export interface PlanRequest extends Omit<SourceRequest, "window" | "modes"> {
   /** "we", "wexe", … ; "d0"; "prediction:7-0"; "model" */
   readonly aim?: string;
   /** standard uncertainty of the new band, "0.02" cm-1 or "0.01 nm"; @default the median of those stated */
@@ -36,10 +37,40 @@ export async function plan(request: PlanRequest): Promise<PlanDocument> {
   const faults: Fault[] = [];
   const options = readPlan(own, faults);
   if (faults.length > 0) throw new InputError(faults);
-  const { series, options: read } = await gather(rest);
-  const plans = series.map((one) => planNext(one, read.model, read.analysis, { ...options, upTo: read.analysis.upTo }));
+  const plans =
+    rest.constants !== undefined || rest.stored !== undefined
+      ? await fromKnown(rest, options)
+      : await fromBands(rest, options);
   const { name: _, ...first } = plans[0]!;
   return { schemaVersion: 1, tool, ...first, series: plans, warnings: warnings(plans, own) };
+}
+
+async function fromBands(request: FitRequest, options: Omit<PlanOptions, "upTo">): Promise<Plan[]> {
+  const { series, options: read, optionsOf } = await gather(request);
+  return series.map((one) => planNext(one, read.model, optionsOf(one), { ...options, upTo: read.analysis.upTo }));
+}
+
+/** From constants or a stored result: what they know, and nothing of the bands behind them. */
+async function fromKnown(request: SourceRequest, options: Omit<PlanOptions, "upTo">): Promise<Plan[]> {
+  const { sources, options: read } = await sourcesOf(request);
+  return sources.map(({ name, values, by, used, lastBandOut, reducedMass }) => {
+    const told = { ...read.analysis, terms: values.length, fixed: {}, reducedMass };
+    const keys = read.model.prepare([], told).parameters.map(({ key }) => key);
+    return planKnown(
+      {
+        name,
+        place: request.stored?.source ?? "--constants",
+        model: read.model,
+        options: told,
+        keys,
+        values,
+        by,
+        used: used.map(({ label }) => label),
+        lastBandOut,
+      },
+      { ...options, upTo: read.analysis.upTo },
+    );
+  });
 }
 
 function warnings(plans: readonly Plan[], own: ReadonlyMap<string, Setting>): Warning[] {

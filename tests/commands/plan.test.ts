@@ -114,6 +114,25 @@ describe("plans", () => {
     expect(candidates[0]!.separation!).toBeGreaterThan(candidates.at(-1)!.separation!);
   });
 
+  it("from constants with their correlation, or a stored result, as from the bands behind them", async () => {
+    const request: PlanRequest = { ...base, bands: hcl.join(", "), aim: "wexe", sigmaNew: 0.02, upTo: 5 };
+    const direct = await plan(request);
+    const document = await fit({ ...base, bands: hcl.join(", ") });
+    const stored = { text: JSON.stringify(document), source: "result.json" };
+    const again = await plan({ stored, aim: "wexe", sigmaNew: 0.02, upTo: 5 });
+    expect(again.candidates.map(({ label }) => label)).toEqual(direct.candidates.map(({ label }) => label));
+    again.candidates.forEach(({ uncertaintyAfter }, i) => {
+      // the same covariance, through JSON
+      expect(Math.abs(uncertaintyAfter / direct.candidates[i]!.uncertaintyAfter - 1)).toBeLessThan(1e-9);
+    });
+    const { constants, correlation } = document.series[0]!;
+    const text = ["we", "wexe"]
+      .map((key) => `${key}=${constants[key]!.value}±${constants[key]!.standardUncertainty}`)
+      .join(" ");
+    const typed = await plan({ constants: text, correlation: correlation!.matrix[0]![1]!, aim: "d0", sigmaNew: 0.02 });
+    expect(typed.candidates[0]!.gain).toBeGreaterThan(1);
+  });
+
   it("say how far to look on both sides, and which σ was assumed", async () => {
     const document = await plan({ series: "2885.98 5667.98 8346.78 10922.8", sigma: 0.05, terms: 2, aim: "wexe" });
     expect(document.candidates[0]!.lastBandOut).toBeGreaterThan(0);
@@ -131,9 +150,29 @@ describe("plans", () => {
     ["a σ of zero", { aim: "we", sigmaNew: 0 }, "sigma-new", 2],
     ["two models that two bands cannot hold", { aim: "model" }, "larger-model-undetermined", 3],
     ["no uncertainty at all", { aim: "we", bands: "1-0 2885.98, 2-0 5667.98" }, "no-uncertainty", 3],
+    [
+      "constants without uncertainties",
+      { aim: "we", constants: "we=2990 wexe=52", sigmaNew: 0.1 },
+      "no-uncertainty",
+      3,
+    ],
+    ["constants without a σ for new bands", { aim: "we", constants: "we=2990(1) wexe=52(1)" }, "sigma-new-missing", 2],
+    ["two models from constants", { aim: "model", constants: "we=2990(1) wexe=52(1)" }, "no-two-models", 2],
+    [
+      "coupled bonds",
+      { aim: "w", model: "coupled", bonds: 2, bands: "10+ 3657, 10- 3756, 20+ 7201.5, 11 7445", sigma: 1 },
+      "no-plan",
+      2,
+    ],
     ["hot bands from nowhere", { aim: "we", hot: "x" }, "not-a-level", 2],
   ])("refuse %s", async (_, request, code, exit) => {
-    const all = request.bands === undefined ? { ...base, bands: hcl.join(", "), ...request } : request;
+    const { bands, ...other } = request;
+    const all: PlanRequest =
+      bands !== undefined
+        ? request
+        : request.constants !== undefined
+          ? other
+          : { ...base, bands: hcl.join(", "), ...other };
     const error = await plan(all).catch((wrong: unknown) => wrong);
     expect(error).toBeInstanceOf(InputError);
     expect([(error as InputError).faults.map((fault) => fault.code), (error as InputError).exit]).toEqual([

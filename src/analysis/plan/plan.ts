@@ -1,21 +1,14 @@
-import type { Series, Shared } from "../../bands/index.ts";
-import { dot, timesInverse } from "../../fitting/index.ts";
-import { InputError } from "../../messages/index.ts";
+import type { Series } from "../../bands/index.ts";
+import { dot } from "../../fitting/index.ts";
 import type { Model } from "../../models/index.ts";
-import {
-  airRange,
-  fromWavenumber,
-  isWavelength,
-  type Quantity,
-  type UnitName,
-  wavenumberPerUnit,
-} from "../../quantity/index.ts";
+import { airRange, fromWavenumber, type Quantity, type UnitName, wavenumberPerUnit } from "../../quantity/index.ts";
 import { solutionOf } from "../analyse.ts";
 import { morseDe } from "../dissociation/morse.ts";
 import type { AnalysisOptions } from "../options.ts";
 import { addScaled, propagate, varianceOf } from "../propagation.ts";
 import { type Solution, trySolve } from "../solution.ts";
 import { turningPoint } from "../turning-point.ts";
+import { type Basis, basisOf, type NewBand, planFault } from "./basis.ts";
 
 /** What a plan is to make better known. */
 export type Aim =
@@ -72,8 +65,9 @@ export interface Plan {
   readonly candidates: readonly PlannedBand[];
 }
 
-/** Levels beyond the last band that are looked at when nothing else is asked. */
+/** Levels beyond the last band that are looked at when nothing else is asked, and the highest one from constants alone. */
 const BEYOND = 3;
+const FROM_CONSTANTS = 6;
 
 /**
  * Which further band would most reduce the uncertainty of an aim. A new datum with row x and variance s², correlated with the others by the errors they
@@ -83,38 +77,67 @@ const BEYOND = 3;
  */
 export function planNext(series: Series, model: Model, given: AnalysisOptions, options: PlanOptions): Plan {
   const { solution } = solutionOf(series, model, given);
-  const basis = options.aim.kind === "model" ? largerModel(solution) : solution;
-  const { fit, by, treated, used } = basis;
-  if (by.covariance === null)
-    throw fault(
-      solution,
+  return options.aim.kind === "model"
+    ? planFrom(basisOf(largerModel(solution)), basisOf(solution), options)
+    : planFrom(basisOf(solution), null, options);
+}
+
+/** The same from constants with a covariance; nothing is known of the bands behind them, so new ones are independent of those. */
+export function planKnown(known: Omit<Basis, "datum" | "usualSigma">, options: PlanOptions): Plan {
+  if (options.aim.kind === "model")
+    throw planFault(
+      known,
+      "no-two-models",
+      "constants alone do not tell two models apart",
+      "plan from the bands, or choose another --aim",
+      2,
+    );
+  const datum = ({ row, sigma }: NewBand) => ({ row, variance: sigma ** 2 });
+  return planFrom({ ...known, usualSigma: null, datum }, null, options);
+}
+
+/** `weaker`: the smaller of two models that are to be told apart. */
+function planFrom(basis: Basis, weaker: Basis | null, options: PlanOptions): Plan {
+  const { model, values, by, used } = basis;
+  if (model.well === undefined && model.limit === undefined)
+    throw planFault(
+      basis,
+      "no-plan",
+      `the model ${model.name} lists no bands to choose from`,
+      "plan with --model oscillator",
+      2,
+    );
+  const { covariance } = by;
+  if (covariance === null)
+    throw planFault(
+      basis,
       "no-uncertainty",
-      "the bands give no uncertainty that a further band could reduce",
-      "state σ with --sigma, or give a band more",
+      "there is no uncertainty that a further band could reduce",
+      "state σ with --sigma, give a band more, or write constants with theirs",
       3,
     );
   const aim = aimOf(basis, options.aim);
-  const now = aim.quantity;
-  const before = Math.sqrt(varianceOf(by.covariance, aim.gradient));
-  const top = Math.max(...used.map((band) => model.levels(band.label).upper));
-  const miss = treated.leftOut[used.findIndex((band) => model.levels(band.label).upper === top)] ?? null;
-  const limit = model.well === undefined ? null : turningPoint(model.well(fit.values), 0);
-  const upTo = Math.min(options.upTo ?? top + BEYOND, limit === null ? Number.POSITIVE_INFINITY : Math.ceil(limit) - 1);
-  const labels = labelsUpTo(model, upTo, options.hot);
+  const before = Math.sqrt(varianceOf(covariance, aim.gradient));
+  const top = Math.max(0, ...used.map((label) => model.levels(label).upper));
+  const limit = model.well === undefined ? null : turningPoint(model.well(values), 0);
+  const wanted = options.upTo ?? (top > 0 ? top + BEYOND : FROM_CONSTANTS);
+  const labels = labelsUpTo(model, Math.min(wanted, limit === null ? wanted : Math.ceil(limit) - 1), options.hot);
   const { calculated, jacobian } = model
     .prepare(
       labels.map((label) => ({ label, isotopologue: null })),
       basis.options,
     )
-    .evaluate(fit.values);
+    .evaluate(values);
   const inWindow = (position: number) =>
     options.windows.length === 0 || options.windows.some(({ low, high }) => position >= low && position <= high);
-  const weaker = options.aim.kind === "model" ? solution : null;
   const candidates = labels.flatMap((label, i): PlannedBand[] => {
     const position = calculated[i]!;
     if (!(position > 0) || !inWindow(position)) return [];
     const sigma = sigmaOf(basis, options.sigmaNew, position);
-    const after = uncertaintyWith(basis, { label, position, sigma, row: jacobian[i]! }, aim.gradient);
+    const { row, variance } = basis.datum({ label, position, sigma, row: jacobian[i]! });
+    const pulled = covariance.map((line) => dot(line, row));
+    const drop = dot(aim.gradient, pulled) ** 2 / (variance + dot(row, pulled));
+    const after = Math.sqrt(Math.max(0, varianceOf(covariance, aim.gradient) - drop));
     const vacuumWavelength = fromWavenumber(position, "nm");
     return [
       {
@@ -122,26 +145,31 @@ export function planNext(series: Series, model: Model, given: AnalysisOptions, o
         position: propagate(position, jacobian[i]!, "cm-1", by),
         vacuumWavelength,
         airWavelength:
-          airRange(vacuumWavelength) === "refused" ? null : fromWavenumber(position, "nm", "air", given.air),
-        lastBandOut: miss === null ? null : Math.abs(miss),
+          airRange(vacuumWavelength) === "refused" ? null : fromWavenumber(position, "nm", "air", basis.options.air),
+        lastBandOut: basis.lastBandOut,
         sigmaNew: sigma,
         uncertaintyAfter: after,
         gain: after > 0 ? before / after : Number.MAX_VALUE,
         separation: weaker === null ? null : separation(weaker, label, position, sigma),
-        observed: used.some((band) => band.label === label),
+        observed: used.includes(label),
       },
     ];
   });
   if (candidates.length === 0)
-    throw fault(
-      solution,
+    throw planFault(
+      basis,
       "no-candidates",
       `no band up to ${labels.at(-1)} lies in ${options.windows.map(({ text }) => text).join(" or ")}`,
       "widen --window or raise --up-to",
       2,
     );
   const worth = ({ gain, separation: apart }: PlannedBand) => apart ?? gain;
-  return { name: series.name, aim: aim.text, now, candidates: candidates.sort((a, b) => worth(b) - worth(a)) };
+  return {
+    name: basis.name,
+    aim: aim.text,
+    now: aim.quantity,
+    candidates: candidates.sort((a, b) => worth(b) - worth(a)),
+  };
 }
 
 function labelsUpTo(model: Model, upTo: number, hot: number): string[] {
@@ -155,14 +183,14 @@ function labelsUpTo(model: Model, upTo: number, hot: number): string[] {
 function largerModel(solution: Solution): Solution {
   const { model, series, options, fit } = solution;
   const terms = fit.values.length;
-  const none = (what: string, mend: string) => fault(solution, "no-two-models", what, mend, 2);
+  const none = (what: string, mend: string) => planFault(basisOf(solution), "no-two-models", what, mend, 2);
   if (model.terms === null)
     throw none(`the model ${model.name} has one number of constants only`, "choose another --aim");
   if (terms >= model.terms.most) throw none(`there is no model with more than ${terms} terms`, "ask for fewer --terms");
   const larger = trySolve(series, model, { ...options, terms: terms + 1 });
   if (larger === null || larger.by.covariance === null)
-    throw fault(
-      solution,
+    throw planFault(
+      basisOf(solution),
       "larger-model-undetermined",
       `${solution.used.length} bands do not determine ${terms + 1} terms with an uncertainty, so nothing is known of how the two models differ`,
       "give a band more, or state σ; then the models can be planned for",
@@ -172,8 +200,8 @@ function largerModel(solution: Solution): Solution {
 }
 
 /** By how many standard uncertainties the smaller model misses the band where the larger one puts it. */
-function separation({ model, options, fit, by }: Solution, label: string, position: number, sigma: number): number {
-  const { calculated, jacobian } = model.prepare([{ label, isotopologue: null }], options).evaluate(fit.values);
+function separation({ model, options, values, by }: Basis, label: string, position: number, sigma: number): number {
+  const { calculated, jacobian } = model.prepare([{ label, isotopologue: null }], options).evaluate(values);
   const variance = by.covariance === null ? 0 : varianceOf(by.covariance, jacobian[0]!);
   return Math.abs(position - calculated[0]!) / Math.sqrt(sigma ** 2 + variance);
 }
@@ -184,17 +212,16 @@ interface AimNow {
   readonly gradient: readonly number[];
 }
 
-function aimOf(solution: Solution, aim: Aim): AimNow {
-  const { model, fit, by, options } = solution;
-  const p = fit.values;
-  const known = fit.keys.filter((key) => options.fixed[key]?.sigma !== null).join(", ");
+function aimOf(basis: Basis, aim: Aim): AimNow {
+  const { model, keys, by, options, values: p } = basis;
+  const known = keys.filter((key) => options.fixed[key]?.sigma !== null).join(", ");
   const { parameters } = model.prepare([], options);
   if (aim.kind === "constant" || aim.kind === "model") {
-    const key = aim.kind === "model" ? fit.keys.at(-1)! : aim.key;
-    const at = fit.keys.indexOf(key);
+    const key = aim.kind === "model" ? keys.at(-1)! : aim.key;
+    const at = keys.indexOf(key);
     if (at < 0 || options.fixed[key]?.sigma === null)
-      throw fault(
-        solution,
+      throw planFault(
+        basis,
         "aim",
         `this fit has no constant "${key}" to be improved`,
         `aim at ${known}, d0, prediction:7-0 or model; or fit more --terms`,
@@ -211,8 +238,8 @@ function aimOf(solution: Solution, aim: Aim): AimNow {
     const well = model.well?.(p);
     const de = well === undefined ? null : morseDe(well, p);
     if (well === undefined || de === null)
-      throw fault(
-        solution,
+      throw planFault(
+        basis,
         "aim",
         "no dissociation energy follows from this fit",
         `aim at ${known} or prediction:7-0`,
@@ -230,72 +257,15 @@ function aimOf(solution: Solution, aim: Aim): AimNow {
 }
 
 /** σ of the new band at its place in cm-1. */
-function sigmaOf(
-  { used, sigmaKnown, fit, options }: Solution,
-  given: PlanOptions["sigmaNew"],
-  position: number,
-): number {
-  if (given !== null) return given.value * Math.abs(wavenumberPerUnit(position, given.unit, "vacuum", options.air));
-  const stated = used.flatMap(({ sigma }) => sigma ?? []).sort((a, b) => a - b);
-  if (sigmaKnown) return stated[Math.floor(stated.length / 2)]!;
-  return Math.sqrt(fit.chiSquare / fit.degreesOfFreedom);
-}
-
-interface NewBand {
-  readonly label: string;
-  readonly position: number;
-  readonly sigma: number;
-  readonly row: readonly number[];
-}
-
-function uncertaintyWith(solution: Solution, band: NewBand, gradient: readonly number[]): number {
-  const { fit, by, errors, treatment, sigmaKnown } = solution;
-  const c = by.covariance!;
-  const own = series(solution).map((shared) => effectOn(shared, solution, band));
-  const correlated = sigmaKnown && own.some((x) => x !== 0);
-  // Without stated σ the residuals say what a band is worth, and a new one will be no better than that.
-  const untied = sigmaKnown
-    ? (band.sigma * treatment.factor) ** 2 + treatment.scatter ** 2
-    : Math.max(band.sigma ** 2, fit.chiSquare / fit.degreesOfFreedom);
-  let variance = untied + (sigmaKnown ? own.reduce((sum, x) => sum + x * x, 0) : 0);
-  let row = band.row;
-  if (correlated) {
-    const tie = fit.residuals.map((_, i) => errors.shared.reduce((sum, parts, k) => sum + parts[i]! * own[k]!, 0));
-    const weighted = timesInverse(fit.whitening, tie);
-    row = band.row.map((x, k) => x - fit.jacobian.reduce((sum, other, i) => sum + weighted[i]! * other[k]!, 0));
-    variance -= tie.reduce((sum, x, i) => sum + x * weighted[i]!, 0);
-  }
-  const pulled = c.map((line) => dot(line, row));
-  const share = dot(gradient, pulled);
-  return Math.sqrt(Math.max(0, varianceOf(c, gradient) - share ** 2 / (variance + dot(row, pulled))));
-}
-
-const series = ({ series: { shared } }: Solution) => shared;
-
-/** What one standard uncertainty of a cause that all bands share does to the new band; a group is one of its own, of which nothing is known. */
-function effectOn(
-  { kind, sigma, parts }: Shared,
-  { options, model, series: { shared } }: Solution,
-  { label, position }: NewBand,
-): number {
-  const { upper, lower } = model.levels(label);
-  if (kind === "per-quantum") return sigma.value * (upper - lower);
-  if (kind === "laser") return parts[0] ?? 0;
-  if (kind !== "calibration") return 0;
-  const unit = sigma.unit as UnitName;
-  if (isWavelength(unit) && shared.some((other) => other.kind === "laser")) return 0;
-  return sigma.value * wavenumberPerUnit(position, unit, "vacuum", options.air);
-}
-
-function fault(
-  { series: { name, bands } }: Solution,
-  code: string,
-  what: string,
-  mend: string,
-  exit: 2 | 3,
-): InputError {
-  return new InputError(
-    [{ code, place: { source: bands[0]?.place.source ?? name }, what: `series "${name}": ${what}`, mend }],
-    exit,
+function sigmaOf(basis: Basis, given: PlanOptions["sigmaNew"], position: number): number {
+  if (given !== null)
+    return given.value * Math.abs(wavenumberPerUnit(position, given.unit, "vacuum", basis.options.air));
+  if (basis.usualSigma !== null) return basis.usualSigma;
+  throw planFault(
+    basis,
+    "sigma-new-missing",
+    "nothing says how well a new band would be measured",
+    "state it with --sigma-new 0.02",
+    2,
   );
 }
