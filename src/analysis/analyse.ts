@@ -1,5 +1,4 @@
 import type { Series } from "../bands/index.ts";
-import { informationCriteria } from "../fitting/index.ts";
 import type { Warning } from "../messages/index.ts";
 import type { Model, Well } from "../models/index.ts";
 import { acceptedD0 } from "./accepted.ts";
@@ -9,6 +8,7 @@ import { derivedNumbers, highestLevel } from "./derived.ts";
 import { dissociationRows } from "./dissociation/rows.ts";
 import { withEmpirical } from "./empirical/with-empirical.ts";
 import { fitWarnings } from "./fit-warnings.ts";
+import { bandResults, qualityOf } from "./fitted-bands.ts";
 import { followManifold } from "./follow-manifold.ts";
 import { refineIntervals } from "./intervals.ts";
 import { withMixture } from "./mixture.ts";
@@ -17,7 +17,7 @@ import type { AnalysisOptions } from "./options.ts";
 import { predict } from "./predictions.ts";
 import { propagate } from "./propagation.ts";
 import { findResonances } from "./resonances.ts";
-import type { BandResult, Prediction, Quality, SeriesResult } from "./result.ts";
+import type { Prediction, SeriesResult } from "./result.ts";
 import { type Solution, solve } from "./solution.ts";
 import { stabilityRows } from "./stability.ts";
 import { thermochemistry } from "./thermochemistry/thermochemistry.ts";
@@ -170,53 +170,6 @@ function correlationOf(
   const part = free.map((i) => free.map((j) => covariance[i]![j]!));
   const matrix = part.map((row, i) => row.map((c, j) => (i === j ? 1 : c / Math.sqrt(part[i]![i]! * part[j]![j]!))));
   return { correlation: { order: free.map((k) => keys[k]!), matrix }, covariance: part };
-}
-
-function qualityOf(solution: Solution): Quality {
-  const { stated, fit, sigmaKnown, used, excess, probability, treated } = solution;
-  const dof = stated.degreesOfFreedom;
-  const squares = fit.residuals.reduce((sum, r) => sum + r * r, 0);
-  const constants = stated.keys.length - Object.values(solution.options.fixed).filter((f) => f.sigma === null).length;
-  const errors = treated.leftOut.filter((e) => e !== null);
-  return {
-    bands: used.length,
-    degreesOfFreedom: dof,
-    chiSquare: sigmaKnown ? stated.chiSquare : null,
-    reducedChiSquare: sigmaKnown && dof > 0 ? stated.chiSquare / dof : null,
-    probability,
-    rms: Math.sqrt(squares / used.length),
-    standardDeviation: dof > 0 ? Math.sqrt(squares / dof) : null,
-    excess,
-    ...informationCriteria(sigmaKnown, stated.chiSquare, used.length, constants),
-    intervalDegreesOfFreedom: solution.by.degreesOfFreedom,
-    leaveOneOutRms:
-      errors.length < used.length ? null : Math.sqrt(errors.reduce((sum, e) => sum + e * e, 0) / errors.length),
-  };
-}
-
-function bandResults({ series, model, options, used, fit, tests, treated, weights }: Solution): BandResult[] {
-  const { calculated } = model.prepare(series.bands, options).evaluate(fit.values);
-  return series.bands.map((band, i) => {
-    const at = used.indexOf(band);
-    const of = <T>(list: readonly T[]): T | null => (at < 0 ? null : (list[at] ?? null));
-    return {
-      label: band.label,
-      observed: band.position,
-      calculated: calculated[i]!,
-      residual: band.position - calculated[i]!,
-      standardUncertainty: band.sigma,
-      studentizedResidual: of(tests.studentized),
-      leverage: of(treated.leverage),
-      leftOutResidual: of(treated.leftOut),
-      used: band.use,
-      weight: weights === null ? null : of(weights),
-      asRead: band.asRead,
-      twoLevels: band.twoLevels,
-      note: band.note,
-      phase: band.phase,
-      place: band.place,
-    };
-  });
 }
 
 function predictionsOf(

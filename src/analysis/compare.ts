@@ -4,9 +4,9 @@ import type { Model } from "../models/index.ts";
 import { interval, normalUpperTail, studentUpperTail } from "../quantity/index.ts";
 import { solutionOf } from "./analyse.ts";
 import { morseDe } from "./dissociation/morse.ts";
+import type { Comparison, Difference } from "./document.ts";
 import type { AnalysisOptions } from "./options.ts";
 import { addScaled, varianceOf } from "./propagation.ts";
-import type { Comparison, Difference } from "./result.ts";
 import type { Solution } from "./solution.ts";
 
 /** Constants from elsewhere, uncertainties null where not stated. */

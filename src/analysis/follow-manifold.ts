@@ -1,8 +1,9 @@
 import type { Warning } from "../messages/index.ts";
 import { fitLocalMode, type Manifold } from "../models/index.ts";
 import { row } from "./dissociation/row.ts";
+import type { ConsequenceResult, Deperturbation, LevelResult } from "./mixed-result.ts";
 import { type Propagation, propagate } from "./propagation.ts";
-import type { ConsequenceResult, Deperturbation, DissociationRow, LevelResult } from "./result.ts";
+import type { DissociationRow } from "./result.ts";
 import type { Solution } from "./solution.ts";
 
 /** What follows from constants of a model whose states mix. */

@@ -1,8 +1,10 @@
 export { analyse } from "./analyse.ts";
 export { type Assignment, assignPeaks } from "./assign/assign.ts";
 export { compareAll, type GivenConstants } from "./compare.ts";
+export type * from "./document.ts";
 export { manifoldAt } from "./follow-manifold.ts";
 export { changeForm, type Form, forms } from "./forms/forms.ts";
+export type * from "./mixed-result.ts";
 export { labelsWithin } from "./near-limit/levels.ts";
 export type { AnalysisOptions, ExcessKind, IntervalKind } from "./options.ts";
 export { type Aim, type Plan, type PlanOptions, planKnown, planNext } from "./plan/plan.ts";

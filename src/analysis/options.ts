@@ -1,10 +1,16 @@
 import type { RobustKind, Treatment } from "../fitting/index.ts";
 import type { ModelOptions } from "../models/index.ts";
 import type { AirConditions } from "../quantity/index.ts";
-import type { Mode } from "./resonances.ts";
 
 export type IntervalKind = "linear" | "profile" | "resample";
 export type ExcessKind = "scatter" | "birge" | "none";
+
+/** Another mode of the molecule, cm-1. */
+export interface Mode {
+  readonly name: string;
+  readonly wavenumber: number;
+  readonly sigma: number | null;
+}
 
 /** One constant in common with other series: `value` ± `sigma` is what they say of it, which `fixed` holds as an observation. */
 export interface SharedConstant {

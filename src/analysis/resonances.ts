@@ -1,15 +1,9 @@
 import type { Well } from "../models/index.ts";
-import type { Resonance, Resonances } from "./result.ts";
+import type { Resonance, Resonances } from "./mixed-result.ts";
+import type { Mode } from "./options.ts";
 import type { Solution } from "./solution.ts";
 import { standsOut } from "./stands-out.ts";
 import { turningPoint } from "./turning-point.ts";
-
-/** Another mode of the molecule, cm-1. */
-export interface Mode {
-  readonly name: string;
-  readonly wavenumber: number;
-  readonly sigma: number | null;
-}
 
 /** Stretch quanta that may be traded at once. */
 const TRADED = [1, 2];

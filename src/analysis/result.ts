@@ -2,6 +2,7 @@ import type { AsRead, TwoLevels } from "../bands/index.ts";
 import type { Place, Warning } from "../messages/index.ts";
 import type { Quantity } from "../quantity/index.ts";
 import type { EmpiricalError } from "./empirical/empirical-error.ts";
+import type { ConsequenceResult, Deperturbation, LevelResult, Resonances } from "./mixed-result.ts";
 
 /** One band beside its calculated position; cm-1, vacuum. */
 export interface BandResult {
@@ -138,87 +139,6 @@ export interface Derived {
   readonly spacingPlotSlope: Quantity;
 }
 
-/** A level of a model whose states mix; cm-1 above the ground state. A degenerate level stands once. */
-export interface LevelResult {
-  readonly label: string;
-  /** total quanta and species of coupled bonds */
-  readonly V?: number;
-  readonly species?: string;
-  /** polyad number, angular momentum of the bend, and place from the highest level down */
-  readonly N?: number;
-  readonly l?: number;
-  readonly j?: number;
-  readonly degeneracy: number;
-  readonly energy: number;
-  readonly standardUncertainty: number | null;
-  /** where it would lie without the coupling */
-  readonly uncoupled: number;
-  /** of the local state that names the level */
-  readonly weight?: number;
-  /** of the pure stretch, which carries the intensity */
-  readonly stretchShare?: number;
-  readonly composition: readonly { readonly state: string; readonly weight: number }[];
-}
-
-/** A number that follows from constants of such a model. */
-export interface ConsequenceResult {
-  readonly key: string;
-  readonly symbol: string;
-  readonly quantity: Quantity | null;
-  readonly note: string | null;
-}
-
-/** Pure overtones of a polyad beside the level that a reader would take for each, and the local-mode constants either gives. */
-export interface Deperturbation {
-  readonly overtones: readonly {
-    readonly v: number;
-    readonly deperturbed: Quantity;
-    readonly strongest: { readonly label: string; readonly energy: number; readonly share: number };
-  }[];
-  /** ω̃ and ω̃x, cm-1 */
-  readonly constants: { readonly w: Quantity; readonly wx: Quantity };
-  /** the same from the strongest levels read as overtones; null for fewer than two */
-  readonly naive: { readonly w: number; readonly wx: number } | null;
-}
-
-/** A combination near an overtone; cm-1. */
-export interface Resonance {
-  readonly band: string;
-  /** as text, such as "2 stretch + bend" */
-  readonly state: string;
-  readonly stretch: number;
-  /** quanta of the other modes, by name */
-  readonly modes: Readonly<Record<string, number>>;
-  /** harmonic sum above the ground state */
-  readonly position: number;
-  /** position less that of the overtone as fitted */
-  readonly gap: number;
-  /** from the stated uncertainties of the modes; null where one has none */
-  readonly gapUncertainty: number | null;
-  /** stretch quanta traded and quanta gained */
-  readonly order: number;
-  /** of the overtone in the fit; null where it was not used */
-  readonly residual: number | null;
-  /** the band stands out, and in the direction this level would push it */
-  readonly matched: boolean;
-}
-
-/** What could perturb the overtones, with --modes. */
-export interface Resonances {
-  readonly window: number;
-  /** the band that stands out in the fit, if one does */
-  readonly standsOut: string | null;
-  /** matched ones first, then by closeness and order */
-  readonly candidates: readonly Resonance[];
-  /** the band that would test the first: an overtone where the same trade comes closer, or the dark level beside its band */
-  readonly test: {
-    readonly label: string;
-    readonly position: number;
-    readonly gap: number;
-    readonly kind: "overtone" | "companion";
-  } | null;
-}
-
 /** D0 as an enthalpy of dissociation at 298.15 K, of a bond that is a whole molecule; kJ/mol. */
 export interface Thermochemistry {
   /** K */
@@ -297,36 +217,5 @@ export interface SeriesResult {
     readonly reason: string;
     readonly iterations: number;
   };
-  readonly warnings: readonly Warning[];
-}
-
-/** One constant, or D0, of two series: second less first, cm-1. */
-export interface Difference {
-  readonly key: string;
-  readonly difference: Quantity;
-  /** two-sided, of so large a difference by chance; null where no uncertainty can be had, or it is shared */
-  readonly probability: number | null;
-}
-
-/** Two series side by side, or constants given from elsewhere and a series. */
-export interface Comparison {
-  readonly first: string;
-  readonly second: string;
-  readonly differences: readonly Difference[];
-  /** errors taken as the same in both */
-  readonly commonErrors: readonly string[];
-}
-
-/** The document of `fit`. */
-export interface FitDocument {
-  readonly schemaVersion: 1;
-  readonly tool: { readonly name: string; readonly version: string };
-  /** the settings as the user gave them, flags over file, long names without dashes */
-  readonly request: Readonly<Record<string, string>>;
-  /** the file read, or null for flags; sha256 of its bytes */
-  readonly input: { readonly source: string; readonly sha256: string } | null;
-  /** pairs of up to twelve series, and each against --compare; empty otherwise */
-  readonly comparisons: readonly Comparison[];
-  readonly series: readonly SeriesResult[];
   readonly warnings: readonly Warning[];
 }

@@ -3,17 +3,10 @@ import type { Setting, Settings } from "../bands/index.ts";
 import type { RobustKind } from "../fitting/index.ts";
 import { type Fault, nearest } from "../messages/index.ts";
 import { type Fixed, findModel, type Model, modelNames, type Notation } from "../models/index.ts";
-import {
-  type AirConditions,
-  fromWavenumber,
-  isWavelength,
-  readAir,
-  readMeasurement,
-  splitUnit,
-  standardAir,
-  toWavenumber,
-} from "../quantity/index.ts";
+import { type AirConditions, readAir, readMeasurement, standardAir } from "../quantity/index.ts";
 import { readAssignments } from "./assignments.ts";
+import { readAccepted, readModes } from "./read-molecule.ts";
+import { Reader } from "./setting-reader.ts";
 
 /** The settings about the fit, read and checked. */
 export interface ReadOptions {
@@ -22,40 +15,6 @@ export interface ReadOptions {
   readonly notation: Notation;
   /** how text writes each constant, in that notation */
   readonly symbols: Readonly<Record<string, string>>;
-}
-
-/** Reads settings one by one and collects what is wrong with them. */
-class Reader {
-  readonly faults: Fault[] = [];
-  readonly settings: Settings;
-
-  constructor(settings: Settings) {
-    this.settings = settings;
-  }
-
-  fault(setting: Setting, code: string, what: string, mend: string): null {
-    this.faults.push({ code, place: setting.place, what, mend });
-    return null;
-  }
-
-  number(name: string, accept: (x: number) => boolean, mend: string): number | null {
-    const setting = this.settings.get(name);
-    if (setting === undefined) return null;
-    const read = readMeasurement(setting.value);
-    if (!read.ok) return this.fault(setting, "not-a-number", read.what, mend);
-    return accept(read.value)
-      ? read.value
-      : this.fault(setting, "out-of-range", `${setting.value} is not possible`, mend);
-  }
-
-  choice<T extends string>(name: string, choices: readonly T[], otherwise: T): T {
-    const setting = this.settings.get(name);
-    if (setting === undefined) return otherwise;
-    const found = choices.find((choice) => choice === setting.value.trim().toLowerCase());
-    if (found === undefined)
-      this.fault(setting, "unknown-choice", `"${setting.value}" is not known`, `write ${choices.join(" or ")}`);
-    return found ?? otherwise;
-  }
 }
 
 const whole = (least: number, most: number) => (x: number) => Number.isInteger(x) && x >= least && x <= most;
@@ -146,76 +105,6 @@ async function readModel(reader: Reader): Promise<Model | null> {
     );
   }
   return model;
-}
-
-/** `--accepted "35759(5)"` or `--accepted-enthalpy 431.6`, in `unit` or with a unit of energy; comes back in `unit`. */
-function readAccepted(
-  reader: Reader,
-  name: string,
-  what: string,
-  example: string,
-  unit: "cm-1" | "kJ/mol",
-): AnalysisOptions["accepted"] {
-  const setting = reader.settings.get(name);
-  if (setting === undefined) return null;
-  const mend = `write an accepted ${what} such as ${example}`;
-  const { number, unit: own } = splitUnit(setting.value);
-  const read = readMeasurement(number);
-  if (!read.ok) return reader.fault(setting, "not-a-number", read.what, mend);
-  if (!(read.value > 0)) return reader.fault(setting, "out-of-range", `an accepted ${what} must be positive`, mend);
-  if (own !== null && isWavelength(own))
-    return reader.fault(setting, "unknown-unit", `${own} is no unit of a dissociation energy`, mend);
-  const convert = (x: number) => (own === null ? x : fromWavenumber(toWavenumber(x, own), unit));
-  return { value: convert(read.value), sigma: read.sigma === null ? null : convert(read.sigma) };
-}
-
-/** `--modes "bend 1370, rock 1020(5)"`: names and wavenumbers in cm-1, by commas, semicolons or newlines. */
-function readModes(reader: Reader, model: Model | null): AnalysisOptions["modes"] {
-  const setting = reader.settings.get("modes");
-  if (setting === undefined) return [];
-  if (model !== null && model.well === undefined) {
-    reader.fault(
-      setting,
-      "modes-of-another-model",
-      `the model ${model.name} has no overtones to be perturbed`,
-      "leave --modes out, or fit --model oscillator",
-    );
-    return [];
-  }
-  const names = new Set<string>();
-  const modes = setting.value
-    .split(/[,;\n]+/)
-    .filter((part) => part.trim() !== "")
-    .flatMap((part) => {
-      const [, name = "", number = ""] = /^\s*(\S.*?)\s+(\S+)\s*$/.exec(part) ?? [];
-      const read = readMeasurement(number);
-      if (name === "" || !read.ok || !(read.value > 0)) {
-        reader.fault(
-          setting,
-          "modes",
-          `"${part.trim()}" is no mode`,
-          'write a name and its wavenumber in cm-1, such as "bend 1370, rock 1020(5)"',
-        );
-        return [];
-      }
-      if (names.has(name))
-        reader.fault(
-          setting,
-          "mode-twice",
-          `the mode "${name}" stands there twice`,
-          "give each mode once, by a name of its own",
-        );
-      names.add(name);
-      return [{ name, wavenumber: read.value, sigma: read.sigma }];
-    });
-  if (modes.length > 12)
-    reader.fault(
-      setting,
-      "too-many-modes",
-      `${modes.length} modes are too many to combine`,
-      "give the twelve that matter most",
-    );
-  return modes;
 }
 
 function readAirConditions(reader: Reader): AirConditions {

@@ -3,21 +3,7 @@ import type { Model, ModelOptions } from "../../models/index.ts";
 import type { AirConditions } from "../../quantity/index.ts";
 import type { Propagation } from "../propagation.ts";
 import type { Solution } from "../solution.ts";
-import { newDatum } from "./new-datum.ts";
-
-/** A band that could be measured: where it is predicted, with σ and the derivatives by the constants. */
-export interface NewBand {
-  readonly label: string;
-  readonly position: number;
-  readonly sigma: number;
-  readonly row: readonly number[];
-}
-
-/** What a new datum adds when what the others tell of it is taken away. */
-export interface Datum {
-  readonly row: readonly number[];
-  readonly variance: number;
-}
+import { type Datum, type NewBand, newDatum } from "./new-datum.ts";
 
 /** What is known before a band is added. */
 export interface Basis {

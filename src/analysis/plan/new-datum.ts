@@ -2,7 +2,20 @@ import type { Shared } from "../../bands/index.ts";
 import { timesInverse } from "../../fitting/index.ts";
 import { isWavelength, type UnitName, wavenumberPerUnit } from "../../quantity/index.ts";
 import type { Solution } from "../solution.ts";
-import type { Datum, NewBand } from "./basis.ts";
+
+/** A band that could be measured: where it is predicted, with σ and the derivatives by the constants. */
+export interface NewBand {
+  readonly label: string;
+  readonly position: number;
+  readonly sigma: number;
+  readonly row: readonly number[];
+}
+
+/** What a new datum adds when what the others tell of it is taken away. */
+export interface Datum {
+  readonly row: readonly number[];
+  readonly variance: number;
+}
 
 /** Row and variance of a new band given the bands there are: errors they share are known in part already (Aitken 1936). */
 export function newDatum(solution: Solution, band: NewBand): Datum {

@@ -8,7 +8,8 @@ import type { AnalysisOptions } from "../options.ts";
 import { addScaled, propagate, varianceOf } from "../propagation.ts";
 import { type Solution, trySolve } from "../solution.ts";
 import { turningPoint } from "../turning-point.ts";
-import { type Basis, basisOf, type NewBand, planFault } from "./basis.ts";
+import { type Basis, basisOf, planFault } from "./basis.ts";
+import type { NewBand } from "./new-datum.ts";
 
 /** What a plan is to make better known. */
 export type Aim =
