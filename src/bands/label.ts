@@ -36,6 +36,13 @@ export function canonicalLabel(label: string): string {
   return upper === undefined ? tidy : `${upper}-${lower}`;
 }
 
+/** A label that another model would understand. */
+function ofAnotherModel(label: string): string {
+  if (/^\d{2,4}([+-]|[ABEF]\d?)?(#\d+)?$/.test(label))
+    return "; levels of coupled bonds want --model coupled --bonds 2 (or 3, 4)";
+  return /^[\d.]+_\d+(:\d+)?$/.test(label) ? "; levels of a polyad want --model polyad" : "";
+}
+
 /** What is wrong with a band whose label must be v'-v" with v' > v"; null when nothing is. */
 export function vibrationalLabelFault({ label, place }: Band): Fault | null {
   const levels = readVibrationalLabel(label);
@@ -45,7 +52,7 @@ export function vibrationalLabelFault({ label, place }: Band): Fault | null {
       code: "label",
       place: at,
       what: `"${label}" is not a label`,
-      mend: `write v'-v", such as 1-0, 3-0 or 2-1`,
+      mend: `write v'-v", such as 1-0, 3-0 or 2-1${ofAnotherModel(label)}`,
     };
   if (levels.upper > levels.lower) return null;
   return {

@@ -155,8 +155,10 @@ async function fromConstants(
       `needs at least ${constants
         .slice(0, least)
         .map((c) => c.key)
-        .join(" and ")}`,
-      'write "we=2990.95 wexe=52.82", for example',
+        .join(", ")}`,
+      options.model.well === undefined
+        ? `write all of them, such as "${constants.map(({ key }) => `${key}=…`).join(" ")}"`
+        : 'write "we=2990.95 wexe=52.82", for example',
     );
   if (faults.length > 0) throw new InputError(faults);
   const used = values.slice(0, Math.max(terms, least)).map((value) => value ?? 0);

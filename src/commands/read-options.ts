@@ -80,6 +80,14 @@ export async function readOptions(
       "an accepted enthalpy can be compared for a diatomic molecule only",
       "add --diatomic, or give an accepted D0 with --accepted",
     );
+  const asked = settings.get("terms");
+  if (asked !== undefined && model?.terms === null && !autoTerms)
+    reader.fault(
+      asked,
+      "setting-of-another-model",
+      `"terms" means nothing to the model ${model.name}`,
+      "leave it out: the model says how many constants there are",
+    );
   if (model !== null) checkOwnSettings(reader, model);
   const notation = reader.choice<Notation>("notation", ["equilibrium", "local"], "equilibrium");
   if (model === null || reader.faults.length > 0) return { options: null, faults: reader.faults };
