@@ -38,7 +38,7 @@ export async function report(request: ReportRequest, assets?: FigureAssets): Pro
   const head = await documentHead(gathered, kept);
   const document: FitDocument = { ...head, series: [...fitEach(gathered)] };
   const { notation, symbols } = gathered.options;
-  const specs = figuresFor(document.series, { widthMm: width, notation });
+  const specs = figuresFor(document.series, { widthMm: width, notation }, document.comparisons);
   const pictures = await renderFigures(specs, assets);
   const figures = specs.map(({ name, caption, alt }) => ({ name, file: `figures/${name}.png`, caption, alt }));
   return {

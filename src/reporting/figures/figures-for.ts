@@ -1,7 +1,8 @@
-import type { SeriesResult } from "../../analysis/index.ts";
+import type { Comparison, SeriesResult } from "../../analysis/index.ts";
 import { birgeSponerFigure } from "./birge-sponer.ts";
 import { compositionFigure } from "./composition.ts";
 import { d0IntervalFigure } from "./d0-interval.ts";
+import { differencesFigure } from "./differences.ts";
 import type { FigureSpec } from "./figure-spec.ts";
 import { levelResidualsFigure } from "./level-residuals.ts";
 import { limitsFigure } from "./limits.ts";
@@ -13,7 +14,11 @@ import { residualsFigure } from "./residuals.ts";
 import { splittingsFigure } from "./splittings.ts";
 
 /** The figures of a report, in order; those that cannot be drawn are left out. */
-export function figuresFor(series: readonly SeriesResult[], options: FigureOptions): FigureSpec[] {
+export function figuresFor(
+  series: readonly SeriesResult[],
+  options: FigureOptions,
+  comparisons: readonly Comparison[] = [],
+): FigureSpec[] {
   const together = [
     birgeSponerFigure,
     residualsFigure,
@@ -32,5 +37,5 @@ export function figuresFor(series: readonly SeriesResult[], options: FigureOptio
       compositionFigure(one, options, name("composition")),
     ].flatMap((figure) => figure ?? []);
   });
-  return [...together, ...each];
+  return [...together, ...[differencesFigure(comparisons, options)].flatMap((figure) => figure ?? []), ...each];
 }
