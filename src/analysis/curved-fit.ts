@@ -5,6 +5,7 @@ import {
   fitNonlinear,
   type LinearFit,
   type NonlinearResult,
+  type Parameter,
   type Problem,
   type Treatment,
   UNTREATED,
@@ -28,7 +29,7 @@ export function fitCurved(problem: Problem, treatment: Treatment, start: readonl
   const priors = parameters.filter(({ prior }) => prior !== undefined).length;
   if (observed.length + priors < free.length)
     throw new UndeterminedError(free.at(-1) ?? 0, `${observed.length} data cannot determine ${free.length} constants`);
-  const found = minimum(problem, treatment, start);
+  const found = positive(minimum(problem, treatment, start), parameters);
   const { calculated, jacobian } = problem.evaluate(found.values);
   const undetermined = /do not determine constant (\d+)/.exec(found.reason);
   if (undetermined !== null || ![calculated, ...jacobian].flat().every(Number.isFinite))
@@ -40,6 +41,10 @@ export function fitCurved(problem: Problem, treatment: Treatment, start: readonl
     observed: observed.map((y, i) => y - calculated[i]! + dot(jacobian[i]!, found.values)),
   };
   const fit = fitLinear(tangent, treatment);
+  const lost = parameters.findIndex(
+    (parameter, k) => freeEven(parameter) && found.values[k]! <= NONE * Math.sqrt(fit.covariance?.[k]?.[k] ?? 0),
+  );
+  if (lost >= 0) throw new UndeterminedError(lost, "the data are met best without it");
   return {
     tangent,
     fit: {
@@ -50,6 +55,15 @@ export function fitCurved(problem: Problem, treatment: Treatment, start: readonl
       iterations: found.iterations,
     },
   };
+}
+
+/** Share of its standard deviation below which a constant of no sign has gone to 0, where no datum depends on it to first order. */
+const NONE = 0.01;
+
+const freeEven = ({ even, held, prior }: Parameter) => even === true && held === undefined && prior === undefined;
+
+function positive(found: NonlinearResult, parameters: readonly Parameter[]): NonlinearResult {
+  return { ...found, values: found.values.map((x, k) => (freeEven(parameters[k]!) ? Math.abs(x) : x)) };
 }
 
 /**

@@ -153,10 +153,14 @@ function determined<T>(
     const distinct = new Set(used.map((band) => band.label)).size;
     const place = { source: series.bands[0]?.place.source ?? series.name };
     const few = `${distinct} different used band${distinct === 1 ? "" : "s"} cannot determine ${free.length} constants (${free.map((p) => p.symbol).join(", ")})`;
-    const mend =
-      distinct < free.length
-        ? `give at least ${free.length} different bands, ${model.terms === null ? "or" : "ask for fewer --terms, or"} hold a constant with --fix`
-        : `they leave ${openDirection(problem, model.starts?.(used, problem.observed, options) ?? null) ?? problem.parameters[error.parameter]!.symbol} open; add a band from another level or hold a constant of these with --fix`;
+    const more = `give at least ${free.length} different bands, ${model.terms === null ? "or" : "ask for fewer --terms, or"} hold a constant with --fix`;
+    const at = model.starts?.(used, problem.observed, options) ?? null;
+    const unseen = unseenConstants(problem, model, at);
+    const mend = [
+      ...(distinct < free.length ? [more] : []),
+      ...unseen,
+      ...(distinct < free.length || unseen.length > 0 ? [] : [openConstants(problem, error.parameter, at)]),
+    ].join("; ");
     throw new InputError([{ code: "not-determined", place, what: `series "${series.name}": ${few}`, mend }], 3);
   }
 }
@@ -210,6 +214,27 @@ function repeats(used: readonly Band[]): number[][] {
     else group.push(i);
   });
   return [...groups.values()];
+}
+
+/** What to do about each free constant that no datum depends on. */
+function unseenConstants({ parameters, evaluate }: Problem, model: Model, at: readonly number[] | null): string[] {
+  if (at === null) return [];
+  const { jacobian } = evaluate(at);
+  return parameters.flatMap(({ key, symbol, typical, held, prior, even }, k) => {
+    if (held !== undefined || prior !== undefined || even === true) return [];
+    // Nothing, beyond rounding of energies, over the whole size of the constant.
+    if (jacobian.some((row) => Math.abs(row[k]!) * typical > 1e-9)) return [];
+    const seenIn = model.constants.find((constant) => constant.key === key)?.seenIn ?? "a band that does";
+    return [`no band depends on ${symbol}: add ${seenIn}, or hold it with --fix "${key}=…"`];
+  });
+}
+
+/** What to do where each constant is seen, but not apart from the others. */
+function openConstants(problem: Problem, parameter: number, at: readonly number[] | null): string {
+  const { key, symbol, even } = problem.parameters[parameter]!;
+  if (even === true)
+    return `they are met best with ${symbol} = 0, where they say nothing of its size; add a band that shows the mixing, or hold it with --fix "${key}=0"`;
+  return `they leave ${openDirection(problem, at) ?? symbol} open; add a band from another level or hold a constant of these with --fix`;
 }
 
 /** A direction among the constants that no datum depends on, such as `ω̃ : ω̃x = 2 : 1`; null where it is one constant alone. */

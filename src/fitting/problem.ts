@@ -18,6 +18,8 @@ export interface Parameter {
   readonly typical: number;
   readonly held?: number;
   readonly prior?: { readonly value: number; readonly sigma: number };
+  /** no datum depends on its sign: free, it is given as positive */
+  readonly even?: true;
 }
 
 /** Calculated data and their derivatives, one row a datum. */

@@ -54,6 +54,8 @@ export interface ConstantInfo {
   readonly symbol: Readonly<Record<Notation, string>>;
   /** only a positive value makes sense */
   readonly positive?: true;
+  /** what alone depends on it, for messages: "levels with …" */
+  readonly seenIn?: string;
 }
 
 /** Settings a model has of its own, by their long names. */

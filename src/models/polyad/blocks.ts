@@ -1,9 +1,12 @@
 import { symmetricEigen } from "../eigen.ts";
 
-/** A block of polyad number N and angular momentum l: states by falling v_s, matrices by constant. */
+/** A block of polyad number N and angular momentum l: states by falling v_s; its matrices have entries on and beside the diagonal only. */
 interface Block {
   readonly states: readonly { readonly s: number; readonly b: number }[];
-  readonly parts: readonly (readonly (readonly number[])[])[];
+  /** diagonals, one a constant but the last, k */
+  readonly diagonals: readonly (readonly number[])[];
+  /** the matrix of k between one state and the next */
+  readonly coupling: readonly number[];
 }
 
 /** A block at given constants, levels from the highest down, as they are numbered. */
@@ -36,26 +39,18 @@ function blockOf(n: number, l: number, single: boolean): Block {
   if (block === undefined) {
     const size = sizeOf(n, l);
     const states = Array.from({ length: size }, (_, i) => ({ s: size - 1 - i, b: 2 * (n - (size - 1 - i)) }));
-    const diagonal = (of: (s: number, b: number) => number) =>
-      states.map(({ s, b }, i) => states.map((_, j) => (i === j ? of(s, b) : 0)));
-    const coupling = states.map((left, i) =>
-      states.map((right, j) => {
-        if (Math.abs(i - j) !== 1) return 0;
-        const { s, b } = i < j ? left : right;
-        return couplingElement(s, b, l, single);
-      }),
-    );
+    const diagonal = (of: (s: number, b: number) => number) => states.map(({ s, b }) => of(s, b));
     block = {
       states,
-      parts: [
+      diagonals: [
         diagonal((s) => s),
         diagonal((_, b) => b),
         diagonal((s) => s * s),
         diagonal((_, b) => b * b),
         diagonal((s, b) => s * b),
         ...(single ? [] : [diagonal(() => l * l)]),
-        coupling,
       ],
+      coupling: states.slice(0, -1).map(({ s, b }) => couplingElement(s, b, l, single)),
     };
     remembered.set(key, block);
   }
@@ -64,19 +59,23 @@ function blockOf(n: number, l: number, single: boolean): Block {
 
 /** Levels of the block with N and l, the highest first. */
 export function solveBlock(n: number, l: number, single: boolean, p: readonly number[]): SolvedBlock {
-  const { states, parts } = blockOf(n, l, single);
-  const hamiltonian = states.map((_, i) =>
-    states.map((__, j) => parts.reduce((sum, part, k) => sum + p[k]! * part[i]![j]!, 0)),
+  const { states, diagonals, coupling } = blockOf(n, l, single);
+  const k = p[diagonals.length]!;
+  const diagonal = states.map((_, i) => diagonals.reduce((sum, of, c) => sum + p[c]! * of[i]!, 0));
+  const { values, vectors } = symmetricEigen(
+    states.map((_, i) =>
+      states.map((__, j) => (i === j ? diagonal[i]! : Math.abs(i - j) === 1 ? k * coupling[Math.min(i, j)]! : 0)),
+    ),
   );
-  const { values, vectors } = symmetricEigen(hamiltonian);
   const down = [...vectors].reverse();
   return {
     states,
     energies: [...values].reverse(),
-    uncoupled: hamiltonian.map((row, i) => row[i]!).sort((a, b) => b - a),
+    uncoupled: [...diagonal].sort((a, b) => b - a),
     vectors: down,
-    gradients: down.map((c) =>
-      parts.map((part) => c.reduce((sum, x, i) => sum + x * c.reduce((inner, y, j) => inner + part[i]![j]! * y, 0), 0)),
-    ),
+    gradients: down.map((c) => [
+      ...diagonals.map((of) => of.reduce((sum, x, i) => sum + x * c[i]! * c[i]!, 0)),
+      coupling.reduce((sum, w, i) => sum + 2 * w * c[i]! * c[i + 1]!, 0),
+    ]),
   };
 }

@@ -14,7 +14,7 @@ export const constants: readonly ConstantInfo[] = [
   info("xss", "xss"),
   info("xbb", "xbb"),
   info("xsb", "xsb"),
-  info("gbb", "gbb"),
+  { ...info("gbb", "gbb"), seenIn: "levels with l above 0, such as 1.5_1:1" },
   info("ksbb", "ksbb"),
 ];
 
@@ -29,7 +29,8 @@ export function parametersOf(options: ModelOptions): Parameter[] {
     const at = constants.findIndex((constant) => constant.key === key);
     const { symbol, unit } = constants[at]!;
     const fixed = options.fixed[key];
-    const base = { key, unit, symbol: symbol.local, start: 0, typical: TYPICAL[at]! };
+    const even = key === "ksbb" ? ({ even: true } as const) : {};
+    const base = { key, unit, symbol: symbol.local, start: 0, typical: TYPICAL[at]!, ...even };
     if (fixed === undefined) return base;
     return fixed.sigma === null
       ? { ...base, held: fixed.value }

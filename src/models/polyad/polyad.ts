@@ -1,10 +1,11 @@
-import { fitValues, type Parameter, type Prepared, UNTREATED } from "../../fitting/index.ts";
+import type { Prepared } from "../../fitting/index.ts";
 import type { Fault } from "../../messages/index.ts";
 import type { Consequence, Manifold, MixedLevel } from "../manifold.ts";
 import type { Model, ModelOptions } from "../model.ts";
-import { type SolvedBlock, sizeOf, solveBlock } from "./blocks.ts";
+import { type SolvedBlock, solveBlock } from "./blocks.ts";
 import { constants, keysOf, parametersOf } from "./constants.ts";
 import { labelOf, type PolyadLevel, readLabel } from "./label.ts";
+import { startsFrom } from "./starts.ts";
 
 const isSingle = ({ bend }: ModelOptions) => bend === "single";
 
@@ -33,12 +34,10 @@ export const polyad: Model = {
       transitions.map(({ label }) => levelOf(label, options)),
       options,
     ),
-  starts: (transitions, observed, options) =>
-    starts(
-      transitions.map(({ label }) => levelOf(label, options)),
-      observed,
-      options,
-    ),
+  starts(transitions, observed, options) {
+    const levels = transitions.map(({ label }) => levelOf(label, options));
+    return startsFrom(levels, observed, prepared(levels, options));
+  },
   labels: () => [],
   levels: (label) => ({ upper: Number.parseFloat(label), lower: 0 }),
   manifold: (options) => manifold(options),
@@ -76,54 +75,6 @@ function prepared(levels: readonly PolyadLevel[], options: ModelOptions): Prepar
       };
     },
   };
-}
-
-/** First constants by least squares about a guess, three times; vague priors stand in where the levels leave a constant open. */
-function starts(levels: readonly PolyadLevel[], observed: readonly number[], options: ModelOptions): number[] {
-  const keys = keysOf(options);
-  const mean = (values: readonly number[], otherwise: number) =>
-    values.length === 0 ? otherwise : values.reduce((sum, x) => sum + x, 0) / values.length;
-  const highest = levels.flatMap(({ n, j, l }, i) => (j === 1 && l === 0 ? [observed[i]! / n] : []));
-  const lowest = levels.flatMap(({ n, j, l }, i) => (j === sizeOf(n, l) ? [observed[i]! / (2 * n)] : []));
-  const wb = mean(lowest, mean(highest, 2800) / 2.1);
-  const guess: Readonly<Record<string, number>> = {
-    ws: mean(highest, 2.1 * wb),
-    wb,
-    xss: -50,
-    xbb: -5,
-    xsb: -20,
-    gbb: 5,
-    ksbb: 60,
-  };
-  const width: Readonly<Record<string, number>> = { ws: 300, wb: 150, xss: 50, xbb: 10, xsb: 30, gbb: 10, ksbb: 80 };
-  const parameters = parametersOf(options).map((parameter): Parameter => {
-    if (parameter.held !== undefined || parameter.prior !== undefined) return parameter;
-    return { ...parameter, prior: { value: guess[parameter.key]!, sigma: width[parameter.key]! } };
-  });
-  let p = parameters.map(({ held, prior }) => held ?? prior!.value);
-  const { evaluate } = prepared(levels, options);
-  for (let round = 0; round < 4; round++) {
-    const { calculated, jacobian } = evaluate(p);
-    const base = p;
-    p = fitValues(
-      {
-        parameters,
-        linear: true,
-        evaluate: (q) => ({
-          calculated: jacobian.map((row) => row.reduce((sum, x, k) => sum + x * q[k]!, 0)),
-          jacobian,
-        }),
-        observed: observed.map(
-          (y, i) => y - calculated[i]! + jacobian[i]!.reduce((sum, x, k) => sum + x * base[k]!, 0),
-        ),
-        errors: { sigmas: observed.map(() => 1), mixing: null, shared: [] },
-      },
-      UNTREATED,
-    );
-    const k = keys.indexOf("ksbb");
-    p[k] = Math.abs(p[k]!);
-  }
-  return p;
 }
 
 function manifold(options: ModelOptions): Manifold {
