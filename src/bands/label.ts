@@ -26,14 +26,19 @@ function parse(label: string): Levels | null {
   return upper === undefined || lower === undefined ? null : { upper: Number(upper), lower: Number(lower) };
 }
 
-/** One form for a label: any dash or minus as hyphen, single spaces, none around the hyphen of v'-v". */
+/** One form for a label: any dash or minus as hyphen, single spaces, none around the hyphen of v'-v", `2_1` for `2.0_1:0`. */
 export function canonicalLabel(label: string): string {
   const tidy = label
     .trim()
     .replace(/[−‐‑–—]/g, "-")
     .replace(/\s+/g, " ");
   const [, upper, lower] = /^v?\s*0*(\d+) ?- ?0*(\d+)$/.exec(tidy) ?? [];
-  return upper === undefined ? tidy : `${upper}-${lower}`;
+  if (upper !== undefined) return `${upper}-${lower}`;
+  const [, polyad, place, l] = /^(\d+(?:\.\d+)?) ?_ ?(\d+)(?: ?: ?(\d+))?$/.exec(tidy) ?? [];
+  if (polyad === undefined) return tidy;
+  // A half N without l is a fault of its own, which :0 must not hide.
+  const ending = l === undefined || (Number(l) === 0 && Number.isInteger(Number(polyad))) ? "" : `:${Number(l)}`;
+  return `${Number(polyad)}_${Number(place)}${ending}`;
 }
 
 /** A label that another model would understand. */

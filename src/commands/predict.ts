@@ -59,6 +59,15 @@ export async function predict(request: PredictRequest): Promise<PredictDocument>
         mend: "leave it out, or name a model of coupled bonds: --model coupled",
       },
     ]);
+  if (hot > 0 && options.model.manifold !== undefined)
+    throw new InputError([
+      {
+        code: "hot",
+        place: { source: "--hot" },
+        what: `the model ${options.model.name} lists levels, not bands`,
+        mend: "leave it out: a hot band lies at the difference of two levels",
+      },
+    ]);
   const series = sources.map((source) =>
     options.model.manifold === undefined
       ? predictionsFrom(source, options, hot)

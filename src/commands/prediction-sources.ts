@@ -150,14 +150,12 @@ async function fromConstants(
   }
   const least = options.model.terms?.least ?? constants.length;
   const terms = values.findLastIndex((value) => value !== null) + 1;
-  if (faults.length === 0 && values.slice(0, least).includes(null))
+  const missing = constants.slice(0, least).flatMap(({ key }, k) => (values[k] === null ? [key] : []));
+  if (faults.length === 0 && missing.length > 0)
     fault(
-      `needs at least ${constants
-        .slice(0, least)
-        .map((c) => c.key)
-        .join(", ")}`,
+      `${missing.join(" and ")} ${missing.length === 1 ? "is" : "are"} missing`,
       options.model.well === undefined
-        ? `write all of them, such as "${constants.map(({ key }) => `${key}=…`).join(" ")}"`
+        ? `write "${constants.map(({ key }) => `${key}=…`).join(" ")}"`
         : 'write "we=2990.95 wexe=52.82", for example',
     );
   if (faults.length > 0) throw new InputError(faults);
@@ -174,7 +172,7 @@ async function fromConstants(
           {
             code: "constants-uncorrelated",
             message:
-              "the constants are taken as uncorrelated: fitted ωe and ωexe are strongly correlated, so these uncertainties are rough; predict from bands or a result.json where they exist",
+              "the constants are taken as uncorrelated: fitted ones are strongly correlated, so these uncertainties are rough; predict from bands or a result.json where they exist",
           },
         ]
       : [];

@@ -55,7 +55,7 @@ export async function readOptions(
     resamples:
       reader.number("resamples", whole(100, 1e7), "write a number of draws from 100 up, such as 10000") ?? 10_000,
     seed: reader.number("seed", whole(0, 2 ** 31), "write a whole number such as 1") ?? 1,
-    upTo: reader.number("up-to", whole(1, 500), "write the highest level to predict, such as 9"),
+    upTo: readUpTo(reader, model),
     air: readAirConditions(reader),
     accepted: readAccepted(reader, "accepted", "D0", "35759(5), or with its unit, 4.4336 eV", "cm-1"),
     diatomic: reader.choice("diatomic", ["yes", "no"], "no") === "yes",
@@ -92,6 +92,16 @@ export async function readOptions(
   const notation = reader.choice<Notation>("notation", ["equilibrium", "local"], "equilibrium");
   if (model === null || reader.faults.length > 0) return { options: null, faults: reader.faults };
   return { options: { model, analysis, notation, symbols: symbolsOf(model, notation) }, faults: [] };
+}
+
+function readUpTo(reader: Reader, model: Model | null): number | null {
+  const { step, most } = model?.highest ?? { step: 1, most: 500 };
+  const accept = (x: number) => Number.isInteger(x / step) && x > 0 && x <= most;
+  const mend =
+    model?.highest === undefined
+      ? "write the highest level to predict, such as 9"
+      : `write a number from ${step} to ${most} in steps of ${step}: the levels of the model ${model.name} multiply with it`;
+  return reader.number("up-to", accept, mend);
 }
 
 /** How text writes the constants of a model. */

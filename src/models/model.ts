@@ -99,6 +99,8 @@ export interface Model {
   readonly settings?: OwnSettings;
   check(series: Series, options: ModelOptions): Fault[];
   prepare(transitions: readonly Transition[], options: ModelOptions): Prepared;
+  /** the block numbers that may be asked for, of models whose levels multiply with them */
+  readonly highest?: { readonly step: number; readonly most: number };
   /** labels of the transitions worth predicting up to a level, in order */
   labels(upTo: number): string[];
   /** upper and lower level of a label */

@@ -42,6 +42,8 @@ export const coupled: Model = {
       observed,
       options,
     ),
+  // Four bonds to V = 15 take some ten seconds.
+  highest: { step: 1, most: 15 },
   labels: () => [],
   levels: (label) => {
     // Quanta of both levels, whatever the number of bonds.

@@ -9,7 +9,8 @@ export interface PolyadLevel {
 
 type Wrong = { readonly what: string; readonly mend: string };
 
-const MOST = 15;
+/** Highest N: beyond it no such polyad is known, and the levels are many. */
+export const MOST = 15;
 
 /** Read `2_1`, `1.5_1:1`; what is wrong comes back with what to write. */
 export function readLabel(label: string, single: boolean): PolyadLevel | Wrong {

@@ -4,7 +4,7 @@ import type { Consequence, Manifold, MixedLevel } from "../manifold.ts";
 import type { Model, ModelOptions } from "../model.ts";
 import { type SolvedBlock, solveBlock } from "./blocks.ts";
 import { constants, keysOf, parametersOf } from "./constants.ts";
-import { labelOf, type PolyadLevel, readLabel } from "./label.ts";
+import { labelOf, MOST, type PolyadLevel, readLabel } from "./label.ts";
 import { startsFrom } from "./starts.ts";
 
 const isSingle = ({ bend }: ModelOptions) => bend === "single";
@@ -23,12 +23,23 @@ export const polyad: Model = {
   terms: null,
   constants,
   settings: { required: [], constants: {}, own: ["bend"] },
-  check: ({ bands }, options) =>
-    bands.flatMap((band): Fault[] => {
+  check: ({ bands }, options) => [
+    ...bands.flatMap((band): Fault[] => {
       const read = readLabel(band.label, isSingle(options));
       if (!("what" in read)) return [];
       return [{ code: "label", place: { ...band.place, column: band.place.column ?? "band" }, ...read }];
     }),
+    ...Object.keys(options.fixed)
+      .filter((key) => !keysOf(options).includes(key))
+      .map(
+        (key): Fault => ({
+          code: "unknown-constant",
+          place: { source: "--fix" },
+          what: `a single bend has no ${key}`,
+          mend: `leave ${key} out, or say --bend degenerate`,
+        }),
+      ),
+  ],
   prepare: (transitions, options) =>
     prepared(
       transitions.map(({ label }) => levelOf(label, options)),
@@ -38,6 +49,7 @@ export const polyad: Model = {
     const levels = transitions.map(({ label }) => levelOf(label, options));
     return startsFrom(levels, observed, prepared(levels, options));
   },
+  highest: { step: 0.5, most: MOST },
   labels: () => [],
   levels: (label) => ({ upper: Number.parseFloat(label), lower: 0 }),
   manifold: (options) => manifold(options),
