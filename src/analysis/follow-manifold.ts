@@ -1,5 +1,7 @@
 import type { Warning } from "../messages/index.ts";
-import { fitLocalMode, type Manifold } from "../models/index.ts";
+import type { Manifold } from "../models/index.ts";
+import { deperturbationOf } from "./deperturbation.ts";
+import { differences } from "./differences.ts";
 import { row } from "./dissociation/row.ts";
 import type { ConsequenceResult, Deperturbation, LevelResult } from "./mixed-result.ts";
 import { type Propagation, propagate } from "./propagation.ts";
@@ -29,14 +31,20 @@ export function followManifold(
   const p = fit.values;
   const labels = used.map(({ label }) => label);
   return {
-    ...manifoldAt(manifold, p, by, options.upTo ?? top + BEYOND),
+    ...manifoldAt(manifold, p, by, options.upTo ?? top + BEYOND, labels),
     dissociation: dissociationOf(manifold, p, by),
-    warnings: [...manifold.warnings(labels, p), ...atFaceValue(solution, excess.applied)],
+    warnings: [...manifold.warnings(labels, p), ...nearZero(solution), ...atFaceValue(solution, excess.applied)],
   };
 }
 
-/** Levels and consequences of given constants. */
-export function manifoldAt(manifold: Manifold, p: readonly number[], by: Propagation, upTo: number): ManifoldFollows {
+/** Levels and consequences of given constants. `observed`: labels of the levels that a reader has; null: all of them. */
+export function manifoldAt(
+  manifold: Manifold,
+  p: readonly number[],
+  by: Propagation,
+  upTo: number,
+  observed: readonly string[] | null = null,
+): ManifoldFollows {
   return {
     levels: manifold
       .levels(p, upTo)
@@ -54,18 +62,8 @@ export function manifoldAt(manifold: Manifold, p: readonly number[], by: Propaga
       const value = of(p);
       return { key, symbol, quantity: value === null ? null : propagate(value, differences(of, p), unit, by), note };
     }),
-    deperturbation: deperturbationOf(manifold, p, by, upTo),
+    deperturbation: deperturbationOf(manifold, p, by, upTo, observed),
   };
-}
-
-/** Gradient by central differences of a smooth function of the constants: for numbers whose derivatives are not written out. */
-function differences(of: (p: readonly number[]) => number | null, p: readonly number[]): number[] {
-  return p.map((x, k) => {
-    const step = 1e-5 * Math.max(1, Math.abs(x));
-    const at = (shift: number) => of(p.map((y, j) => (j === k ? y + shift : y)));
-    const [high, low] = [at(step), at(-step)];
-    return high === null || low === null ? 0 : (high - low) / (2 * step);
-  });
 }
 
 const FROZEN_FRAME =
@@ -91,23 +89,24 @@ function dissociationOf(manifold: Manifold, p: readonly number[], by: Propagatio
   });
 }
 
-function deperturbationOf(
-  manifold: Manifold,
-  p: readonly number[],
-  by: Propagation,
-  upTo: number,
-): Deperturbation | null {
-  const overtones = manifold.deperturbed?.(p, upTo);
-  if (overtones === undefined) return null;
-  const position = (v: number) => (q: readonly number[]) =>
-    manifold.deperturbed!(q, v).find((one) => one.v === v)!.position;
-  const own = (key: "omega" | "omegaX") => (q: readonly number[]) => manifold.oscillators(q)[0]![key];
-  const quantity = (of: (q: readonly number[]) => number) => propagate(of(p), differences(of, p), "cm-1", by);
-  return {
-    overtones: overtones.map(({ v, strongest }) => ({ v, deperturbed: quantity(position(v)), strongest })),
-    constants: { w: quantity(own("omega")), wx: quantity(own("omegaX")) },
-    naive: fitLocalMode(overtones.map(({ v, strongest }) => [v, strongest.energy] as const)),
-  };
+/** Standard uncertainties within which a constant of no sign is told from 0 to first order only. */
+const TOLD_APART = 3;
+
+/** Positions go with the square of a constant of no sign, so near 0 its linear interval is wrong. */
+function nearZero({ model, options, fit, by }: Solution): Warning[] {
+  return model.prepare([], options).parameters.flatMap(({ key, symbol, even, held, prior }, k) => {
+    const u = Math.sqrt(by.covariance?.[k]?.[k] ?? 0);
+    if (even !== true || held !== undefined || prior !== undefined || Math.abs(fit.values[k]!) > TOLD_APART * u)
+      return [];
+    if (options.intervals === "profile") return [];
+    return [
+      {
+        code: "near-zero",
+        message: `${symbol} is less than ${TOLD_APART} of its standard uncertainties: the levels go with its square, so its interval reaches further down than stated; give --intervals profile, or hold it with --fix "${key}=0" and compare χ²`,
+        about: key,
+      },
+    ];
+  });
 }
 
 function atFaceValue({ used, sigmaKnown, options }: Solution, applied: boolean): Warning[] {

@@ -12,7 +12,7 @@ import type { Warning } from "../messages/index.ts";
 import type { Well } from "../models/index.ts";
 import { coverageFactor, type Quantity } from "../quantity/index.ts";
 import { morseDe } from "./dissociation/morse.ts";
-import { addScaled } from "./propagation.ts";
+import { coordinate, innerMorse, morseScalar, positionScalar } from "./interval-scalars.ts";
 import type { IntervalRecord, SeriesResult } from "./result.ts";
 import type { Solution } from "./solution.ts";
 
@@ -50,17 +50,26 @@ export function refineIntervals(solution: Solution, result: SeriesResult): Serie
     return refined;
   };
   const well = (p: readonly number[]) => model.well!(p);
+  const manifold = model.manifold?.(options) ?? null;
+  const even = model.prepare([], options).parameters.flatMap((one) => (one.even === true ? [one.key] : []));
   const constants = Object.fromEntries(
     Object.entries(result.constants).map(([key, quantity]) => {
       const at = fit.keys.indexOf(key);
       if (quantity.standardUncertainty === null) return [key, quantity];
-      return [key, apply({ key, scalar: coordinate(at, fit.keys.length) }, quantity, true)];
+      const refined = apply({ key, scalar: coordinate(at, fit.keys.length) }, quantity, true);
+      return [key, even.includes(key) && options.intervals === "profile" ? fromZero(refined) : refined];
     }),
   );
-  const dissociation = result.dissociation.map((row) => {
+  const dissociation = result.dissociation.map((row, i) => {
     // There the limit is one of the constants.
     if (row.method === "near-limit") return row.d0 === null ? row : { ...row, d0: constants[limitKey(solution)]! };
     if (row.method !== "morse" || row.d0 === null || row.de === null) return row;
+    if (manifold !== null)
+      return {
+        ...row,
+        de: apply({ key: "De", scalar: innerMorse(manifold, i, false) }, row.de, false),
+        d0: apply({ key: "D0", scalar: innerMorse(manifold, i, true) }, row.d0, true),
+      };
     const de = apply({ key: "De", scalar: morseScalar(well, false) }, row.de, false);
     return {
       ...row,
@@ -87,6 +96,18 @@ export function refineIntervals(solution: Solution, result: SeriesResult): Serie
   };
 }
 
+/** Of a constant without a sign: χ² is the same on both sides of 0, so the interval ends there. */
+function fromZero(quantity: Quantity): Quantity {
+  const cut = (bounds: readonly [number, number] | null): readonly [number, number] | null =>
+    bounds === null ? null : [Math.max(0, bounds[0]), bounds[1]];
+  const { interval } = quantity;
+  return {
+    ...quantity,
+    interval95: cut(quantity.interval95),
+    ...(interval === undefined ? {} : { interval: { ...interval, bounds: cut(interval.bounds) } }),
+  };
+}
+
 const limitKey = ({ model, fit }: Solution) => fit.keys[model.limit!.energy]!;
 
 /** Y00 is added to De as a constant; the interval found without it moves along. */
@@ -105,30 +126,6 @@ function shifted(
     interval95: move(refined.interval95),
     ...(interval === undefined ? {} : { interval: { ...interval, bounds: move(interval.bounds) } }),
   };
-}
-
-function coordinate(at: number, size: number): Scalar {
-  const gradient = Array.from({ length: size }, (_, k) => Number(k === at));
-  return { value: (p) => p[at]!, gradient: () => gradient };
-}
-
-function morseScalar(well: (p: readonly number[]) => Well, fromGround: boolean): Scalar {
-  return {
-    value: (p) => {
-      const de = morseDe(well(p), p);
-      return de === null ? Number.NaN : de.value - (fromGround ? well(p).term(0) : 0);
-    },
-    gradient: (p) => {
-      const de = morseDe(well(p), p);
-      if (de === null) return p.map(() => Number.NaN);
-      return fromGround ? addScaled(de.gradient, well(p).termGradient(0), -1) : de.gradient;
-    },
-  };
-}
-
-function positionScalar({ model, options }: Solution, label: string): Scalar {
-  const { evaluate } = model.prepare([{ label, isotopologue: null }], options);
-  return { value: (p) => evaluate(p).calculated[0]!, gradient: (p) => evaluate(p).jacobian[0]! };
 }
 
 type Refine = (

@@ -30,17 +30,30 @@ export interface ConsequenceResult {
   readonly note: string | null;
 }
 
+/** ω̃ and ω̃x of levels read as overtones, cm-1. */
+interface NaiveReading {
+  readonly w: number;
+  readonly wx: number;
+}
+
 /** Pure overtones of a polyad beside the level that a reader would take for each, and the local-mode constants either gives. */
 export interface Deperturbation {
   readonly overtones: readonly {
     readonly v: number;
     readonly deperturbed: Quantity;
-    readonly strongest: { readonly label: string; readonly energy: number; readonly share: number };
+    readonly strongest: {
+      readonly label: string;
+      readonly energy: number;
+      readonly share: number;
+      readonly observed: boolean;
+    };
+    /** from the strongest levels up to this one read as overtones; null for fewer than two, and where this one was not observed */
+    readonly naive: NaiveReading | null;
   }[];
   /** ω̃ and ω̃x, cm-1 */
   readonly constants: { readonly w: Quantity; readonly wx: Quantity };
-  /** the same from the strongest levels read as overtones; null for fewer than two */
-  readonly naive: { readonly w: number; readonly wx: number } | null;
+  /** from all strongest levels that were observed; null for fewer than two */
+  readonly naive: NaiveReading | null;
 }
 
 /** A combination near an overtone; cm-1. */

@@ -64,5 +64,7 @@ export interface Deperturbed {
   readonly v: number;
   /** cm-1 */
   readonly position: number;
+  /** of the position, by the constants in their order */
+  readonly gradient: readonly number[];
   readonly strongest: { readonly label: string; readonly energy: number; readonly share: number };
 }

@@ -119,6 +119,7 @@ function manifold(options: ModelOptions): Manifold {
         return {
           v,
           position: p[at("ws")]! * v + p[at("xss")]! * v * v,
+          gradient: keys.map((key) => (key === "ws" ? v : key === "xss" ? v * v : 0)),
           strongest: { label: labelOf({ n: v, j: best + 1, l: 0 }), energy: energies[best]!, share: shares[best]! },
         };
       });

@@ -1,5 +1,4 @@
 import type { LevelResult, SeriesResult } from "../../analysis/index.ts";
-import { notDetermined } from "../../quantity/index.ts";
 import type { Column, TableData } from "../table-data.ts";
 import { fixed, measured, quantity } from "../text/cells.ts";
 import { unitSymbol } from "../text/units.ts";
@@ -61,6 +60,12 @@ export function consequencesTable({ consequences }: Pick<SeriesResult, "conseque
   };
 }
 
+/** By how much a reading is off, in words. */
+function bias(read: number, truth: number): string {
+  const share = read / truth - 1;
+  return `the latter ${fixed(Math.abs(share) * 100, 1)} % too ${share < 0 ? "small" : "large"}`;
+}
+
 /** Overtones without their neighbours beside the levels that would be read as them; null for models without. */
 export function deperturbationTable({ deperturbation }: Pick<SeriesResult, "deperturbation">): TableData | null {
   if (deperturbation === null || deperturbation.overtones.length === 0) return null;
@@ -72,14 +77,23 @@ export function deperturbationTable({ deperturbation }: Pick<SeriesResult, "depe
       { quantity: "strongest level", align: "left" },
       { quantity: "at", unit: "cm-1", align: "point" },
       { quantity: "its stretch share", align: "point" },
+      { quantity: "ω̃x if read", unit: "cm-1", align: "point" },
     ],
-    rows: overtones.map(({ v, deperturbed, strongest }) => ({
-      cells: [String(v), quantity(deperturbed), strongest.label, fixed(strongest.energy, 2), fixed(strongest.share, 4)],
+    rows: overtones.map(({ v, deperturbed, strongest, naive: read }) => ({
+      cells: [
+        String(v),
+        quantity(deperturbed),
+        strongest.label,
+        fixed(strongest.energy, 2),
+        fixed(strongest.share, 4),
+        fixed(read?.wx ?? null, 2),
+      ],
     })),
     notes: [
-      `Deperturbed, ω̃ = ${quantity(constants.w)} and ω̃x = ${quantity(constants.wx)} cm⁻¹; the strongest levels read as overtones would give ${
-        naive === null ? notDetermined : `${fixed(naive.w, 2)} and ${fixed(naive.wx, 2)} cm⁻¹`
-      }.`,
+      `Deperturbed, ω̃ = ${quantity(constants.w)} and ω̃x = ${quantity(constants.wx)} cm⁻¹.`,
+      naive === null
+        ? "Fewer than two of the strongest levels were observed, so there is nothing to read as overtones."
+        : `The observed strongest levels read as overtones would give ω̃ = ${fixed(naive.w, 2)} and ω̃x = ${fixed(naive.wx, 2)} cm⁻¹, ${bias(naive.wx, constants.wx.value)}: a bias, not a scatter, and De goes with it. Last column: read up to that level.`,
     ],
   };
 }
