@@ -9,6 +9,8 @@ import { paddedRange } from "./ticks.ts";
 /** Total quanta of a level, or its polyad number. */
 export const blockOf = ({ V, N }: LevelResult): number => V ?? N ?? 0;
 
+/** Width of the part of a polyad level that is pure stretch, pt. */
+const HEAVY = 2;
 /** Diameter of the marks of observed levels in pt: small, for levels lie close. */
 const MARK = 3;
 
@@ -19,7 +21,7 @@ export const blockSymbol = (levels: readonly LevelResult[]): Run => ({
 });
 
 /** Ends of the parts of a column, in units of the distance between columns. */
-const COLUMN = { local: [-0.38, -0.1], level: [0, 0.36], observed: 0.43 } as const;
+const COLUMN = { local: [-0.38, -0.1], level: [0, 0.3], observed: 0.43 } as const;
 
 /**
  * Levels by total quanta or polyad: without the coupling on the left of each column, with it on the right, joined; observed ones marked. Of a
@@ -49,7 +51,7 @@ export function mixedLevelsFigure(series: SeriesResult, options: FigureOptions, 
       stroke(left!, free, middle!, free, GREY, SIZE.thin),
       stroke(middle!, free, right!, bound, GREY, SIZE.thin, [1, 1.2]),
       ...(polyads ? [stroke(right!, bound, full, bound, "#000000", SIZE.thin)] : []),
-      stroke(right!, bound, right! + share * (full - right!), bound, "#000000", polyads ? 2 * SIZE.line : SIZE.line),
+      stroke(right!, bound, right! + share * (full - right!), bound, "#000000", polyads ? HEAVY : SIZE.line),
     ];
   });
   const points: Point[] = bands.flatMap(({ label, observed }) => {

@@ -44,14 +44,34 @@ describe("figures of levels that mix", () => {
     expect(Math.abs(points(figure)[0]!.y - (3657.053 - spacing))).toBeLessThan(1e-9);
   });
 
-  it("polyads: pure stretches of whole N, strokes as long as their share", () => {
+  it("polyads: whole N, a heavy stroke as long as the stretch share on a thin one of full length", () => {
     const figure = mixedLevelsFigure(polyad, options, "levels");
     const shown = polyad.levels!.filter(({ N, l }) => l === 0 && Number.isInteger(N));
-    expect(lines(figure)).toHaveLength(3 * shown.length);
-    const strokes = lines(figure).filter((_, i) => i % 3 === 2);
-    const length = (i: number) => strokes[i]!.points[1]!.x - strokes[i]!.points[0]!.x;
-    const order = shown.map((level, i) => [level.stretchShare!, length(i)] as const).sort((a, b) => a[0] - b[0]);
-    for (let i = 1; i < order.length; i++) expect(order[i]![1]).toBeGreaterThan(order[i - 1]![1] - 1e-9);
+    expect(lines(figure)).toHaveLength(4 * shown.length);
+    const length = (i: number) => lines(figure)[i]!.points[1]!.x - lines(figure)[i]!.points[0]!.x;
+    shown.forEach(({ stretchShare }, i) => {
+      // rounding
+      expect(Math.abs(length(4 * i + 3) / length(4 * i + 2) - stretchShare!)).toBeLessThan(1e-9);
+    });
+  });
+
+  it("polyads: half N with l = 1 have columns of their own once one of their levels is observed, each observed level a mark", async () => {
+    const bands = `1_1 3037.7, 1_2 2704.3, 2_1 5959.5, 2_2 5710, 2_3 5340.5, 3_1 8785.4, 3_2 8591.6, 1.5_1:1 4398.4`;
+    const both = (await fit({ bands, model: "polyad", sigma: 0.5 })).series[0]!;
+    const figure = mixedLevelsFigure(both, options, "levels");
+    const shown = both.levels!.filter(({ l }) => l! < 2);
+    expect(lines(figure)).toHaveLength(4 * shown.length);
+    expect(points(figure)).toHaveLength(8);
+    expect(figure!.caption).toContain("l = 1 for half N");
+    // no column reaches into the next: all of one column within half a step, 0.25
+    lines(figure).forEach(({ points: ends }, i) => {
+      for (const { x } of ends) expect(Math.abs(x - shown[Math.floor(i / 4)]!.N!)).toBeLessThan(0.25);
+    });
+  });
+
+  it("polyads: residuals of one polyad stand side by side", () => {
+    const at = points(levelResidualsFigure(polyad, options, "x")).map(({ x }) => x);
+    expect(new Set(at).size).toBe(polyad.bands.length);
   });
 
   it("residuals by V, species told apart by marker, bars where σ was stated", () => {
