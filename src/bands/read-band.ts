@@ -1,13 +1,13 @@
 import type { Fault } from "../messages/index.ts";
-import { isWavelength, readMeasurement, type UnitName } from "../quantity/index.ts";
+import { isWavelength } from "../quantity/index.ts";
 import type { Bond } from "../species/index.ts";
 import { bondFrom, type Context, isWrong, mediumFrom, unitFrom } from "./context.ts";
 import { type Footing, type Placed, placePosition, rate, readUncertainty, type Wrong } from "./conversion.ts";
 import { canonicalLabel } from "./label.ts";
 import type { ColumnName, RawRow } from "./raw.ts";
-import type { Laser } from "./read-shared.ts";
+import { readCompanion } from "./read-companion.ts";
 import type { Band } from "./series.ts";
-import { separate } from "./two-levels.ts";
+import { stokesFault } from "./stokes.ts";
 
 /** A band, and whether its air wavelength lies beyond the dispersion formula. */
 export interface ReadBand {
@@ -69,49 +69,16 @@ export function readBand(
     const stokes = stokesFault(unit, position, context.laser);
     if (stokes !== null) wrong(isWavelength(unit) ? "position" : "unit", stokes);
   }
-  const companion = read("companion", (text) => placePosition(text, footing));
-  const ratio = read("ratio", ratioFrom);
-  if (position === null || faults.length > before) return null;
-  if (companion !== null && companion.wavenumber === position.wavenumber)
-    return wrong("companion", {
-      code: "companion-equals-band",
-      what: "the companion stands where the band stands",
-      mend: "give the position of the weaker band of the pair",
-    });
-  if ((companion === null) !== (ratio === null))
-    return wrong(ratio === null ? "ratio" : "companion", {
-      code: ratio === null ? "companion-without-ratio" : "ratio-without-companion",
-      what:
-        ratio === null
-          ? "a companion is given, but not the ratio of intensities"
-          : "a ratio of intensities is given, but no companion",
-      mend:
-        ratio === null
-          ? "write band over companion in the column ratio, such as 6.7 or 6.7(3), or leave the companion out"
-          : "write the position of the companion in the column companion, or leave the ratio out",
-    });
-  /** A wavenumber as measured, as the position of a band. */
-  const shift = (wavenumber: number) => (context.laser === null ? wavenumber : context.laser.wavenumber - wavenumber);
   const twoLevels =
-    companion === null || ratio === null
-      ? null
-      : separate({
-          band: shift(position.wavenumber),
-          bandSigma: sigma?.value ?? null,
-          companion: shift(companion.wavenumber),
-          companionSigma:
-            companion.stated === null
-              ? null
-              : companion.stated.value * Math.abs(rate(companion.wavenumber, unit, footing)),
-          ratio: ratio.value,
-          ratioSigma: ratio.sigma,
-        });
+    position === null ? null : readCompanion(cells, position, sigma?.value ?? null, footing, context, wrong);
+  if (position === null || faults.length > before) return null;
+  const measured = context.laser === null ? position.wavenumber : context.laser.wavenumber - position.wavenumber;
   return {
     extrapolated: position.extrapolated,
     absolute: position.wavenumber,
     band: {
       label,
-      position: twoLevels?.corrected ?? shift(position.wavenumber),
+      position: twoLevels?.corrected ?? measured,
       sigma: twoLevels === null ? (sigma?.value ?? null) : twoLevels.sigma,
       isotopologue,
       use,
@@ -122,22 +89,6 @@ export function readBand(
       place,
       asRead: { text: cells.position!, unit, medium, sigmaText: sigma?.text ?? null },
     },
-  };
-}
-
-/** With an exciting line positions are scattered wavelengths, to the red of it. */
-function stokesFault(unit: UnitName, { wavenumber }: Placed, laser: Laser): Wrong | null {
-  if (!isWavelength(unit))
-    return {
-      code: "laser-without-wavelength",
-      what: `a laser is given, but the position is in ${unit}`,
-      mend: "write scattered wavelengths with --unit nm, or leave --laser out for shifts in cm-1",
-    };
-  if (wavenumber < laser.wavenumber) return null;
-  return {
-    code: "not-stokes",
-    what: `the scattered light does not lie to the red of the laser at ${(1e7 / laser.wavenumber).toFixed(2)} nm (vacuum)`,
-    mend: "give Stokes lines, at longer wavelengths than the laser, or mend --laser",
   };
 }
 
@@ -205,14 +156,4 @@ function useFrom(text: string): boolean | Wrong {
   if (YES.includes(word)) return true;
   if (NO.includes(word)) return false;
   return { code: "use", what: `"${text}" is neither yes nor no`, mend: "write yes or no" };
-}
-
-function ratioFrom(text: string): { value: number; sigma: number | null } | Wrong {
-  const read = readMeasurement(text);
-  if (read.ok && read.value > 0) return { value: read.value, sigma: read.sigma };
-  return {
-    code: "ratio",
-    what: `"${text}" is not a positive intensity ratio`,
-    mend: "write band over companion, such as 6.7",
-  };
 }
