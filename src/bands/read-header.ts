@@ -31,6 +31,18 @@ const RESULT_COLUMNS: ReadonlySet<string> = new Set([
   "as_read_sigma",
   "as_read_unit",
   "as_read_medium",
+  "measured_position",
+  "measured_sigma",
+  "companion_position",
+  "companion_sigma",
+  "companion_ratio",
+  "companion_ratio_sigma",
+  "companion_coupling",
+  "companion_coupling_sigma",
+  "companion_shift",
+  "companion_shift_sigma",
+  "as_read_companion",
+  "as_read_ratio",
 ]);
 
 /** The columns a header names, null for one that is none; what is wrong is added to `faults`. `labelled`: rows need labels. */

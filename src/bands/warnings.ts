@@ -56,7 +56,7 @@ export function aboutCompanions(used: readonly Band[]): Warning[] {
       : [
           {
             code: "companion-corrected",
-            message: `${label} is moved by ${pair.shift.toFixed(2)} cm-1 to ${pair.corrected.toFixed(2)}, away from its companion's repulsion (coupling ${pair.coupling.toFixed(2)} cm-1): that holds for two levels only of which the dark one carries no intensity of its own, else the ratio misleads; ${pair.ratioSigma === null ? "the ratio counts as exact, write 6.7(3) with its uncertainty; " : ""}${pair.ratio < 1 ? "the companion is the stronger of the two, so the label may belong to it; " : ""}compare with the fit without ${label}`,
+            message: `${label} is moved by ${pair.shift.toFixed(2)} cm-1 to ${pair.corrected.toFixed(2)}, where it would stand without its companion (coupling ${pair.coupling.toFixed(2)} cm-1): that holds for two levels only of which the dark one carries no intensity of its own, else the ratio misleads; ${pair.ratioSigma === null ? "the ratio counts as exact, write 6.7(3) with its uncertainty; " : ""}${pair.ratio < 1 ? "the companion is the stronger of the two, so the label may belong to it; " : ""}compare with the fit without ${label}`,
             about: label,
           },
         ],

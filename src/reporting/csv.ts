@@ -1,4 +1,4 @@
-import type { FitDocument } from "../analysis/index.ts";
+import type { FitDocument, SeriesResult } from "../analysis/index.ts";
 import { type CsvCell, csvText } from "./csv-text.ts";
 
 /** Who wrote a file, from which bytes; no colon, so that it is no setting when the file is read again. */
@@ -41,20 +41,50 @@ function settings({ series, request }: FitDocument): string[] {
 
 /**
  * Bands as used beside their calculated positions, in cm-1 and vacuum. The first eight columns and the settings above them
- * are input again; the shared part of the uncertainty is not among them.
+ * are input again; the shared part of the uncertainty is not among them. A band corrected for a companion stands there as corrected.
  */
 export function bandsCsv(document: FitDocument): string {
   const head = ["band", "position", "unit", "medium", "sigma", "series", "use", "note"];
   const more = ["calculated", "residual", "studentized_residual", "leverage", "left_out_residual"];
   const read = ["as_read", "as_read_sigma", "as_read_unit", "as_read_medium"];
+  const corrected = document.series.some(({ bands }) => bands.some(({ twoLevels }) => twoLevels !== null));
   const rows = document.series.flatMap(({ name, bands }) =>
     bands.map((band): CsvCell[] => [
       ...[band.label, band.observed, "cm-1", "vacuum", band.standardUncertainty, name, band.used, band.note],
       ...[band.calculated, band.residual, band.studentizedResidual, band.leverage, band.leftOutResidual],
       ...[band.asRead.text, band.asRead.sigmaText, band.asRead.unit, band.asRead.medium],
+      ...(corrected ? companionCells(band.twoLevels) : []),
     ]),
   );
-  return csvText([origin(document), ...settings(document)], [...head, ...more, ...read], rows);
+  return csvText(
+    [origin(document), ...settings(document)],
+    [...head, ...more, ...read, ...(corrected ? COMPANION_COLUMNS : [])],
+    rows,
+  );
+}
+
+/** Only where a band was corrected for a companion: `position` is then the corrected one, `measured_position` that before it. */
+const COMPANION_COLUMNS = [
+  "measured_position",
+  "measured_sigma",
+  "companion_position",
+  "companion_sigma",
+  "companion_ratio",
+  "companion_ratio_sigma",
+  "companion_coupling",
+  "companion_coupling_sigma",
+  "companion_shift",
+  "companion_shift_sigma",
+  "as_read_companion",
+  "as_read_ratio",
+];
+
+function companionCells(pair: SeriesResult["bands"][number]["twoLevels"]): CsvCell[] {
+  if (pair === null) return COMPANION_COLUMNS.map(() => null);
+  return [
+    ...[pair.measured, pair.measuredSigma, pair.companion, pair.companionSigma, pair.ratio, pair.ratioSigma],
+    ...[pair.coupling, pair.couplingSigma, pair.shift, pair.shiftSigma, pair.asRead.companion, pair.asRead.ratio],
+  ];
 }
 
 /** Constants with their covariance, one column `covariance_KEY` a constant (unit: product of both units). */

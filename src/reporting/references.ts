@@ -26,6 +26,13 @@ export const references = {
     where: "Van Nostrand, New York",
   },
   // from memory
+  herzberg1945: {
+    authors: "G. Herzberg",
+    year: 1945,
+    title: "Molecular Spectra and Molecular Structure. II. Infrared and Raman Spectra of Polyatomic Molecules",
+    where: "Van Nostrand, New York",
+  },
+  // from memory
   morse1929: {
     authors: "P. M. Morse",
     year: 1929,

@@ -1,5 +1,5 @@
 import type { SeriesResult } from "../../analysis/index.ts";
-import { counted, modelPhrase, seriesPhrase } from "./captions.ts";
+import { correctedPhrase, counted, modelPhrase, seriesPhrase } from "./captions.ts";
 import { compose, heightFor } from "./compose.ts";
 import type { FigureSpec, Point, Trace } from "./figure-spec.ts";
 import { levelsOf, observedSpacings } from "./levels.ts";
@@ -205,7 +205,7 @@ function caption(series: readonly SeriesResult[], options: FigureOptions, local:
     : "";
   return [
     `${what}, for ${seriesPhrase(series)}.`,
-    `Points: observed${hollow ? ` (${other})` : ""}; ${bars}.`,
+    `Points: observed${hollow ? ` (${other})` : ""}; ${bars}.${correctedPhrase(series)}`,
     `Line: ${modelPhrase(series, options)} fitted to the band positions themselves${band};`,
     "thinner and more widely broken: extrapolated beyond the highest observed band.",
   ].join(" ");

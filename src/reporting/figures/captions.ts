@@ -39,3 +39,12 @@ export function modelPhrase(series: readonly SeriesResult[], { notation }: Figur
 export function namesOf(series: readonly SeriesResult[]): string {
   return listed(series.map(({ name }) => name));
 }
+
+/** A sentence on bands that stand as corrected for a companion; empty without any. */
+export function correctedPhrase(series: readonly SeriesResult[]): string {
+  const several = series.length > 1;
+  const labels = series.flatMap(({ name, bands }) =>
+    bands.flatMap(({ label, twoLevels }) => (twoLevels === null ? [] : [several ? `${label} of ${name}` : label])),
+  );
+  return labels.length === 0 ? "" : ` Corrected for a companion: ${listed([...new Set(labels)])}.`;
+}

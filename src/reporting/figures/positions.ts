@@ -1,5 +1,5 @@
 import type { SeriesResult } from "../../analysis/index.ts";
-import { counted, seriesPhrase } from "./captions.ts";
+import { correctedPhrase, counted, seriesPhrase } from "./captions.ts";
 import { compose, heightFor, type PanelPlan, plannedFrames } from "./compose.ts";
 import type { FigureSpec, Point, Trace } from "./figure-spec.ts";
 import type { FigureOptions } from "./options.ts";
@@ -130,7 +130,7 @@ function caption(series: readonly SeriesResult[], all: readonly Mark[]): string 
     : "";
   return [
     `Band positions (vacuum wavenumbers) of ${seriesPhrase(series)}: filled, observed and fitted; hollow${series.length > 4 ? " (crosses: small)" : ""}, predicted`,
-    `${unused ? "; grey, observed but not fitted" : ""}. Upper axis: vacuum wavelength.${bars}`,
+    `${unused ? "; grey, observed but not fitted" : ""}. Upper axis: vacuum wavelength.${bars}${correctedPhrase(series)}`,
   ].join("");
 }
 

@@ -1,5 +1,5 @@
 import type { SeriesResult } from "../../analysis/index.ts";
-import { counted, modelPhrase, seriesPhrase } from "./captions.ts";
+import { correctedPhrase, counted, modelPhrase, seriesPhrase } from "./captions.ts";
 import { compose, heightFor } from "./compose.ts";
 import type { FigureSpec, Point, Trace } from "./figure-spec.ts";
 import { levelsOf } from "./levels.ts";
@@ -133,7 +133,7 @@ function caption(
   return [
     `Residuals, observed minus calculated, against the upper level v′ for ${seriesPhrase(series)},`,
     `fitted by ${modelPhrase(series, options)}.`,
-    `Bars: ${known ? "stated standard uncertainties" : "none, as no uncertainties were stated"}${hollow}.${flagged}`,
+    `Bars: ${known ? "stated standard uncertainties" : "none, as no uncertainties were stated"}${hollow}.${flagged}${correctedPhrase(series)}`,
     ...(beyond > 0 ? [`${counted(beyond, "unused band")} outside the frame.`] : []),
   ].join(" ");
 }

@@ -12,6 +12,7 @@ const isLength = (unit: string) => ["nm", "um"].includes(readUnit(unit) ?? "");
 /** Bands as they were read beside the positions really used. */
 export function bandsAsRead({ bands }: SeriesResult): string {
   const phases = bands.some(({ phase }) => phase !== null);
+  const corrected = bands.some(({ twoLevels }) => twoLevels !== null);
   return table({
     columns: [
       { quantity: "band", align: "left" },
@@ -19,19 +20,23 @@ export function bandsAsRead({ bands }: SeriesResult): string {
       { quantity: "σ as read", align: "right" },
       { quantity: "unit, medium", align: "left" },
       { quantity: "ν̃ vacuum", unit: "cm-1", align: "point" },
+      ...(corrected ? [{ quantity: "ν̃ corrected", unit: "cm-1", align: "point" } as const] : []),
       ...(phases ? [{ quantity: "phase", align: "left" } as const] : []),
       { quantity: "used", align: "left" },
       { quantity: "place", align: "left" },
     ],
     rows: bands.map((band) => {
-      const { asRead, observed, standardUncertainty: u } = band;
+      const { asRead, observed, standardUncertainty: u, twoLevels: pair } = band;
+      const cell = (value: number, sigma: number | null) =>
+        sigma === null ? fixed(value, bandDecimals(band)) : measured(value, sigma);
       return {
         cells: [
           band.label,
           asRead.text,
           asRead.sigmaText ?? notDetermined,
           isLength(asRead.unit) ? `${unitSymbol(asRead.unit)}, ${asRead.medium}` : unitSymbol(asRead.unit),
-          u === null ? fixed(observed, bandDecimals(band)) : measured(observed, u),
+          pair === null ? cell(observed, u) : cell(pair.measured, pair.measuredSigma),
+          ...(corrected ? [pair === null ? "" : cell(observed, u)] : []),
           ...(phases ? [band.phase ?? notDetermined] : []),
           band.used ? "yes" : "no",
           formatPlace(band.place),

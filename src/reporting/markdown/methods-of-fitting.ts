@@ -41,6 +41,14 @@ function solving(series: readonly SeriesResult[], request: FitDocument["request"
     text.push(
       "The shifts of the groups are the estimates that this covariance implies: constants of the fit with their prior.",
     );
+  if (some(series, ({ bands }) => bands.some(({ twoLevels }) => twoLevels !== null)))
+    text.push(
+      `Bands with a companion are corrected for two levels of which one is dark ${cite("herzberg1945")}: with Δ between band and companion and R the ratio of their intensities, the coupling is W = Δ√R/(R + 1) and the band by itself lies Δ/(R + 1) nearer to the companion; the uncertainties of both positions and of the ratio are propagated.`,
+    );
+  if (some(series, ({ resonances }) => resonances !== null))
+    text.push(
+      "Combinations near the overtones are harmonic sums: term values of the stretch as fitted plus whole multiples of the wavenumbers of the other modes.",
+    );
   if (request.spacings === "subtracted")
     text.push(
       "Spacings were subtracted from measured positions, so neighbours share errors: the covariance is tridiagonal.",

@@ -5,9 +5,10 @@ import { bandDecimals } from "../text/band-decimals.ts";
 import { fixed, measured } from "../text/cells.ts";
 import { andList } from "../text/lists.ts";
 
-/** Observed beside calculated; excluded bands are marked and muted. */
+/** Observed beside calculated, with the corrected position where a companion was given; excluded bands are marked and muted. */
 export function bandsTable({ bands }: SeriesResult): TableData {
   const anyOut = bands.some(({ used }) => !used);
+  const anyCorrected = bands.some(({ twoLevels }) => twoLevels !== null);
   const rows = bands.map((band) => {
     const decimals = bandDecimals(band);
     const {
@@ -18,11 +19,15 @@ export function bandsTable({ bands }: SeriesResult): TableData {
       studentizedResidual,
       leverage,
       leftOutResidual,
+      twoLevels: pair,
     } = band;
+    const cell = (value: number, sigma: number | null) =>
+      sigma === null ? fixed(value, decimals) : measured(value, sigma);
     return {
       cells: [
         band.label,
-        u === null ? fixed(observed, decimals) : measured(observed, u),
+        pair === null ? cell(observed, u) : cell(pair.measured, pair.measuredSigma),
+        ...(anyCorrected ? [pair === null ? "" : cell(observed, u)] : []),
         fixed(calculated, decimals),
         fixed(residual, decimals),
         fixed(studentizedResidual, 2),
@@ -37,6 +42,7 @@ export function bandsTable({ bands }: SeriesResult): TableData {
     columns: [
       { quantity: "band", align: "left" },
       { quantity: "observed", unit: "cm-1", align: "point" },
+      ...(anyCorrected ? [{ quantity: "corrected", unit: "cm-1", align: "point" } as const] : []),
       { quantity: "calculated", unit: "cm-1", align: "point" },
       { quantity: "obs − calc", unit: "cm-1", align: "point" },
       { quantity: "studentised", align: "point" },
@@ -50,6 +56,16 @@ export function bandsTable({ bands }: SeriesResult): TableData {
 }
 
 function bandNotes(bands: SeriesResult["bands"]): string[] {
+  return [...correctedNotes(bands), ...openNotes(bands)];
+}
+
+function correctedNotes(bands: SeriesResult["bands"]): string[] {
+  const corrected = bands.filter(({ twoLevels }) => twoLevels !== null).map(({ label }) => label);
+  if (corrected.length === 0) return [];
+  return [`Corrected for a companion: ${andList(corrected)}; what is fitted and compared is the corrected position.`];
+}
+
+function openNotes(bands: SeriesResult["bands"]): string[] {
   const open = bands.filter((band) => band.used && band.studentizedResidual === null);
   if (open.length === 0) return [];
   const which =
