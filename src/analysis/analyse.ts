@@ -16,7 +16,7 @@ import { followLimit } from "./near-limit/follow-limit.ts";
 import type { AnalysisOptions } from "./options.ts";
 import { predict } from "./predictions.ts";
 import { propagate } from "./propagation.ts";
-import { findResonances } from "./resonances.ts";
+import { findResonances, withCandidate } from "./resonances.ts";
 import type { Prediction, SeriesResult } from "./result.ts";
 import { type Solution, solve } from "./solution.ts";
 import { stabilityRows } from "./stability.ts";
@@ -40,6 +40,15 @@ export function analyse(measured: Series, model: Model, given: AnalysisOptions):
   const { first, warnings, ...follows } = whatFollows(solution);
   const known = acceptedD0(solution);
   const common = commonErrors(solution);
+  // Where the law itself is refused, no single band is to blame.
+  const aboutFit = fitWarnings(solution, choice !== null).filter(
+    ({ code }) => first.length === 0 || code !== "band-stands-out",
+  );
+  const standsOut = aboutFit.find(({ code }) => code === "band-stands-out")?.about ?? null;
+  const resonances =
+    options.modes.length === 0 || model.well === undefined
+      ? null
+      : findResonances(solution, standsOut, options.modes, options.window);
   const heat = thermochemistry(solution, follows.dissociation, known.accepted);
   return refineIntervals(solution, {
     name: series.name,
@@ -64,10 +73,7 @@ export function analyse(measured: Series, model: Model, given: AnalysisOptions):
     thermochemistry: heat.thermochemistry,
     comparison: choice?.comparison ?? null,
     commonErrors: common.errors,
-    resonances:
-      options.modes.length === 0 || model.well === undefined
-        ? null
-        : findResonances(solution, model.well(p), options.modes, options.window),
+    resonances,
     intervals: null,
     fitReport: {
       method: `${linear ? LINEAR_METHOD : NONLINEAR_METHOD}${options.robust === null ? "" : `, robust weights (${options.robust})`}`,
@@ -81,8 +87,7 @@ export function analyse(measured: Series, model: Model, given: AnalysisOptions):
       ...aboutMixture,
       ...common.warnings,
       ...(choice?.warnings ?? []),
-      // Where the law itself is refused, no single band is to blame.
-      ...fitWarnings(solution, choice !== null).filter(({ code }) => first.length === 0 || code !== "band-stands-out"),
+      ...withCandidate(aboutFit, resonances),
       ...warnings,
       ...known.warnings,
       ...heat.warnings,

@@ -72,10 +72,12 @@ export interface Resonance {
   readonly gapUncertainty: number | null;
   /** stretch quanta traded and quanta gained */
   readonly order: number;
-  /** of the overtone in the fit; null where it was not used */
+  /** of the band in the fit that gave the overtones; null where it was not used */
   readonly residual: number | null;
   /** the band stands out, and in the direction this level would push it */
   readonly matched: boolean;
+  /** of two levels, the matrix element that explains the residual; null where it is not matched */
+  readonly coupling: number | null;
 }
 
 /** What could perturb the overtones, with --modes. */
@@ -83,13 +85,19 @@ export interface Resonances {
   readonly window: number;
   /** the band that stands out in the fit, if one does */
   readonly standsOut: string | null;
+  /** overtones, gaps and residuals are those of the fit without this band; null: of all bands */
+  readonly without: string | null;
   /** matched ones first, then by closeness and order */
   readonly candidates: readonly Resonance[];
-  /** the band that would test the first: an overtone where the same trade comes closer, or the dark level beside its band */
+  /**
+   * the band that would test the first: an overtone not measured yet where the same trade comes closer, or the dark level beside its band, with the intensity of the band over its own
+   * where its coupling is known
+   */
   readonly test: {
     readonly label: string;
     readonly position: number;
     readonly gap: number;
+    readonly ratio: number | null;
     readonly kind: "overtone" | "companion";
   } | null;
 }

@@ -26,8 +26,8 @@ export interface Entry {
 const bands = { title: "Bands:", flags: bandFlags };
 const molecule = { title: "Molecule:", flags: moleculeFlags };
 const fitting = { title: "Fit:", flags: fitFlags };
-/** A plan has windows of its own. */
-const planFitting = { title: "Fit:", flags: fitFlags.filter(({ name }) => name !== "window" && name !== "modes") };
+/** Resonances are looked for where a fit is shown; a plan has windows of its own. */
+const fittingAlone = { title: "Fit:", flags: fitFlags.filter(({ name }) => name !== "window" && name !== "modes") };
 const common = { title: "Output:", flags: commonFlags };
 
 export const catalogue: readonly Entry[] = [
@@ -54,7 +54,7 @@ export const catalogue: readonly Entry[] = [
     name: "predict",
     summary: "band positions from bands, a stored result.json, or constants",
     argument: "[FILE]",
-    groups: [{ title: "Predictions:", flags: predictFlags }, bands, molecule, fitting, common],
+    groups: [{ title: "Predictions:", flags: predictFlags }, bands, molecule, fittingAlone, common],
     examples: [
       'rungwise predict --constants "we=2990.95(1) wexe=52.82(1)" --up-to 7',
       'rungwise predict --series "2885.98 5667.98 8346.78" --up-to 6 --hot 1',
@@ -76,7 +76,7 @@ export const catalogue: readonly Entry[] = [
     name: "plan",
     summary: "which band to measure next, and where to look for it",
     argument: "[FILE]",
-    groups: [{ title: "Plan:", flags: planFlags }, bands, molecule, planFitting, common],
+    groups: [{ title: "Plan:", flags: planFlags }, bands, molecule, fittingAlone, common],
     examples: [
       'rungwise plan --series "2885.98 5667.98" --sigma 0.02 --aim wexe',
       'rungwise plan --series "2885.98 5667.98" --sigma 0.02 --aim d0 --up-to 7',

@@ -14,7 +14,7 @@ import type { ReadOptions } from "./read-options.ts";
 import { tool } from "./tool.ts";
 
 /** What `predict` may be told: bands as for `fit`, or constants, or a stored result of `fit`. */
-export interface PredictRequest extends SourceRequest {
+export interface PredictRequest extends Omit<SourceRequest, "window" | "modes"> {
   /** also bands that start from levels up to this; @default 0 */
   readonly hot?: number;
   /** coupled bonds: the same bonds with another isotope, such as "O D", by mass scaling */

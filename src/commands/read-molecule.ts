@@ -24,51 +24,52 @@ export function readAccepted(
   return { value: convert(read.value), sigma: read.sigma === null ? null : convert(read.sigma) };
 }
 
-/** `--modes "bend 1370, rock 1020(5)"`: names and wavenumbers in cm-1, by commas, semicolons or newlines. */
+/** More would make more combinations than anyone can judge. */
+const MOST = 12;
+const FORM = 'write a name and its wavenumber in cm-1, such as "bend 1370, rock 1020(5)"';
+
+/** `--modes "bend 1370, rock 1020(5)"`: split by commas, semicolons or newlines; the last word of each is the wavenumber in cm-1, the words before it the name. */
 export function readModes(reader: Reader, model: Model | null): AnalysisOptions["modes"] {
   const setting = reader.settings.get("modes");
   if (setting === undefined) return [];
-  if (model !== null && model.well === undefined) {
-    reader.fault(
-      setting,
+  const refuse = (code: string, what: string, mend: string): [] => {
+    reader.fault(setting, code, what, mend);
+    return [];
+  };
+  if (model !== null && model.well === undefined)
+    return refuse(
       "modes-of-another-model",
       `the model ${model.name} has no overtones to be perturbed`,
       "leave --modes out, or fit --model oscillator",
     );
-    return [];
-  }
   const names = new Set<string>();
-  const modes = setting.value
+  const parts = setting.value
+    .replace(/\s*(±|\+\/?-)\s*(?=[\d.])/g, "$1")
+    .replace(/(?<=\d)\s+(?=\([\d.]+\))/g, "")
     .split(/[,;\n]+/)
-    .filter((part) => part.trim() !== "")
-    .flatMap((part) => {
-      const [, name = "", number = ""] = /^\s*(\S.*?)\s+(\S+)\s*$/.exec(part) ?? [];
-      const read = readMeasurement(number);
-      if (name === "" || !read.ok || !(read.value > 0)) {
-        reader.fault(
-          setting,
-          "modes",
-          `"${part.trim()}" is no mode`,
-          'write a name and its wavenumber in cm-1, such as "bend 1370, rock 1020(5)"',
-        );
-        return [];
-      }
-      if (names.has(name))
-        reader.fault(
-          setting,
-          "mode-twice",
-          `the mode "${name}" stands there twice`,
-          "give each mode once, by a name of its own",
-        );
-      names.add(name);
-      return [{ name, wavenumber: read.value, sigma: read.sigma }];
-    });
-  if (modes.length > 12)
-    reader.fault(
-      setting,
-      "too-many-modes",
-      `${modes.length} modes are too many to combine`,
-      "give the twelve that matter most",
-    );
+    .map((part) => part.trim())
+    .filter((part) => part !== "");
+  const modes = parts.flatMap((part) => {
+    const [, name = "", number = ""] = /^(\S.*?)\s+(\S+)$/.exec(part.replace(/\s+cm-1$/i, "")) ?? [];
+    const read = readMeasurement(number);
+    if (name === "" || !read.ok) return refuse("modes", `"${part}" is no mode`, FORM);
+    if (!/^\p{L}/u.test(name))
+      return refuse("modes", `"${name}" in "${part}" is no name: it does not begin with a letter`, FORM);
+    if (!(read.value > 0))
+      return refuse("mode-not-positive", `the mode "${name}" is not at a positive wavenumber`, FORM);
+    if (name.toLowerCase() === "stretch")
+      return refuse(
+        "mode-is-stretch",
+        '"stretch" is the oscillator that is fitted',
+        "give the other modes, by other names",
+      );
+    if (names.has(name.toLowerCase()))
+      return refuse("mode-twice", `the mode "${name}" stands there twice`, "give each mode once, by a name of its own");
+    names.add(name.toLowerCase());
+    return [{ name, wavenumber: read.value, sigma: read.sigma }];
+  });
+  if (parts.length === 0) refuse("no-modes", "names no modes", FORM);
+  if (modes.length > MOST)
+    refuse("too-many-modes", `${modes.length} modes are too many to combine`, `give the ${MOST} that matter most`);
   return modes;
 }
