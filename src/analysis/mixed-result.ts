@@ -76,6 +76,8 @@ export interface Resonance {
   readonly residual: number | null;
   /** the band stands out, and in the direction this level would push it */
   readonly matched: boolean;
+  /** where the band was given a companion: the dark level by itself, as the correction has it, less `position` */
+  readonly companionGap: number | null;
   /** of two levels, the matrix element that explains the residual; null where it is not matched */
   readonly coupling: number | null;
 }

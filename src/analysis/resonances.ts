@@ -45,6 +45,7 @@ export function findResonances(
     const label = v === perturbed ? standsOut! : `${v}-0`;
     const band = used.find((one) => one.label === label);
     const { lower } = model.levels(label);
+    const pair = band?.twoLevels ?? null;
     const residual = band === undefined ? null : band.position - (energy(v) - energy(lower));
     for (const traded of TRADED) {
       if (traded > v) continue;
@@ -65,6 +66,8 @@ export function findResonances(
           order: traded + gained,
           residual,
           matched,
+          // The dark level by itself lies as far from its companion as the band from its own position.
+          companionGap: pair === null ? null : pair.companion - pair.shift - position,
           coupling: matched ? Math.sqrt(Math.abs(residual) * (Math.abs(gap) + Math.abs(residual))) : null,
         });
       }
@@ -130,7 +133,7 @@ function stateText(stretch: number, quanta: readonly number[], modes: readonly M
 
 /**
  * The band that would test a candidate: an overtone not measured yet where the same trade comes closer, or the dark level itself beside its band. Beside a band that
- * stands out it is pushed away as far as the band is, and two levels share their intensity as (|gap| + |s|)/|s|.
+ * stands out it is pushed away as far as the band is, and two levels share their intensity as (|gap| + |s|)/|s|. None where that companion was given already.
  */
 function testOf(
   best: Resonance | null,
@@ -138,7 +141,7 @@ function testOf(
   modes: readonly Mode[],
   measured: ReadonlySet<string>,
 ): Resonances["test"] {
-  if (best === null) return null;
+  if (best === null || best.companionGap !== null) return null;
   const v = Number.parseInt(best.band, 10);
   const traded = v - best.stretch;
   const gained = modes.reduce((sum, { name, wavenumber }) => sum + (best.modes[name] ?? 0) * wavenumber, 0);

@@ -85,20 +85,19 @@ describe("near-degeneracies", () => {
   });
 
   it("names an overtone not measured yet where the same trade comes closer", async () => {
-    // one stretch for two bends of 1420 (2840): 4-0 lies 3004 above 3-0: gap -164; 5-0 lies 2830 above 4-0: gap 10; 5-0 is not measured
-    const given = { bands: [1, 2, 3, 4].map((v) => typed(v)).join(", "), modes: "bend 1420", window: 170 };
-    const { candidates, test } = await resonances(given);
-    expect(candidates.slice(0, 2).map(({ band, gap }) => [band, Math.round(gap)])).toEqual([
-      ["5-0", 10],
-      ["4-0", -164],
-    ]);
-    // the first is 5-0 itself: nothing is closer, and the dark level stands beside it
-    expect(test).toMatchObject({ kind: "companion", label: "5-0", ratio: null });
-    const pushed = { ...given, bands: [1, 2, 3, 4].map((v) => typed(v, v === 4 ? 1 : 0)).join(", "), sigma: 0.1 };
-    const matched = await resonances(pushed);
-    expect(matched.candidates[0]).toMatchObject({ band: "4-0", matched: true });
-    expect(matched.test).toMatchObject({ kind: "overtone", label: "5-0" });
-    expect(Math.abs(matched.test!.gap)).toBeLessThan(Math.abs(matched.candidates[0]!.gap));
+    // two bends of 1495 (2990) for a stretch: 4-0 lies 3004 above 3-0, gap -14; 5-0 lies 2830 above 4-0, gap 160; 4-0 is not measured
+    const given = (shift: number) => [1, 2, 3, 5, 6].map((v) => typed(v, v === 5 ? shift : 0)).join(", ");
+    const more = { modes: "bend 1495", window: 170 };
+    const { candidates, test } = await resonances({ ...more, bands: given(-3) });
+    expect(candidates[0]).toMatchObject({ band: "5-0", state: "4 stretch + 2 bend", matched: true });
+    expect(test).toMatchObject({ kind: "overtone", label: "4-0", ratio: null });
+    expect(Math.abs(test!.position - position(4))).toBeLessThan(1e-6);
+    expect(Math.abs(test!.gap + 14)).toBeLessThan(1e-6);
+    // nothing stands out: 4-0 itself is the first, nothing is closer, and the dark level stands beside it
+    const calm = await resonances({ ...more, bands: given(0) });
+    expect(calm.candidates[0]).toMatchObject({ band: "4-0", residual: null, matched: false, coupling: null });
+    expect(calm.test).toMatchObject({ kind: "companion", label: "4-0", ratio: null });
+    expect(Math.abs(calm.test!.position - (position(4) - 14))).toBeLessThan(1e-6);
   });
 
   it("says so when there is none", async () => {

@@ -4,6 +4,7 @@ import { separate } from "../../src/bands/two-levels.ts";
 import { fit } from "../../src/commands/fit.ts";
 import type { InputError } from "../../src/messages/index.ts";
 import { generator } from "../analysis/ladders.ts";
+import { faultsOf, understand } from "./read.ts";
 
 const pair = { bandSigma: null, companionSigma: null, ratioSigma: null };
 const number = (min: number, max: number) => fc.double({ min, max, noNaN: true });
@@ -50,7 +51,7 @@ describe("two levels, one dark", () => {
       ratio: 6.7,
       ratioSigma: 0.3,
     };
-    const { sigma, couplingSigma } = separate(given);
+    const { sigma, couplingSigma, shiftSigma } = separate(given);
     const { normal } = generator(17);
     const draws = Array.from({ length: 20_000 }, () =>
       separate({
@@ -67,6 +68,72 @@ describe("two levels, one dark", () => {
     // half a percent is the standard error of such a deviation; the curvature in R adds a few tenths
     expect(Math.abs(deviation(draws.map(({ corrected }) => corrected)) / sigma! - 1)).toBeLessThan(0.02);
     expect(Math.abs(deviation(draws.map(({ coupling }) => coupling)) / couplingSigma! - 1)).toBeLessThan(0.02);
+    expect(Math.abs(deviation(draws.map(({ shift }) => shift)) / shiftSigma! - 1)).toBeLessThan(0.02);
+  });
+});
+
+describe("a companion as it is read", () => {
+  const read = async (columns: string, cells: string, options: Record<string, string> = {}) => {
+    const { series } = await understand(`band,position,companion,ratio${columns}\n${cells}\n`, options);
+    return { band: series[0]!.bands[0]!, warnings: series[0]!.warnings };
+  };
+
+  it("in the unit and medium of its row", async () => {
+    const { band } = await read(",unit,medium", "3-0,993.985(10),991.201(10),6.7,nm,air");
+    // demo.md: 10057.756(101) and 10086.006; half a unit of the last printed digit
+    expect(Math.abs(band.twoLevels!.measured - 10057.756)).toBeLessThan(5.1e-4);
+    expect(Math.abs(band.twoLevels!.companion - 10086.006)).toBeLessThan(5.1e-4);
+    expect(Math.abs(band.twoLevels!.companionSigma! - 0.102)).toBeLessThan(5.1e-4);
+    expect(band.twoLevels!.asRead).toEqual({ companion: "991.201(10)", ratio: "6.7" });
+  });
+
+  it("--sigma-means holds for what stands after ±, in companion and ratio as in the position; parentheses are standard", async () => {
+    const means = { "sigma-means": "2sigma" };
+    const plus = (await read("", "1-0,3000±0.2,3020±0.4,5±0.6", means)).band.twoLevels!;
+    expect([plus.measuredSigma, plus.companionSigma, plus.ratioSigma]).toEqual([0.1, 0.2, 0.3]);
+    const brackets = (await read("", "1-0,3000.0(2),3020.0(4),5.0(6)", means)).band.twoLevels!;
+    expect([brackets.measuredSigma, brackets.companionSigma, brackets.ratioSigma]).toEqual([0.2, 0.4, 0.6]);
+  });
+
+  it("without σ of its own it has that of the band; without any, none is made up", async () => {
+    expect((await read("", "1-0,3000.0(2),3020,5")).band.twoLevels!.companionSigma).toBe(0.2);
+    const { band } = await read("", "1-0,3000,3020,5.0(6)");
+    expect([band.sigma, band.twoLevels!.couplingSigma, band.twoLevels!.shiftSigma]).toEqual([null, null, null]);
+  });
+
+  it("as scattered light where there is an exciting line, to the red of it like its band", async () => {
+    const nm = (shift: number) => (1e7 / (1e7 / 532 - shift)).toFixed(6);
+    const { band } = await read(",unit", `1-0,${nm(3000)},${nm(3020)},5,nm`, { laser: "532.0" });
+    // (5·3000 + 3020)/6; wavelengths to 1e-6 nm are 3e-5 cm-1
+    expect(Math.abs(band.position - 18020 / 6)).toBeLessThan(1e-4);
+    expect(
+      (await faultsOf(() => read(",unit", `1-0,${nm(3000)},531,5,nm`, { laser: "532.0" }))).map(({ code }) => code),
+    ).toEqual(["not-stokes"]);
+  });
+
+  it("TOML has the same names", async () => {
+    const toml = (more: string) => `[[bands]]\nband = "1-0"\nposition = "3000.0(2)"\n${more}`;
+    const [one] = (await understand(toml('companion = "3020.0(4)"\nratio = "5.0(6)"\n'), {}, "toml")).series;
+    const [same] = (await understand("band,position,companion,ratio\n1-0,3000.0(2),3020.0(4),5.0(6)\n")).series;
+    expect(one!.bands[0]!.twoLevels).toEqual(same!.bands[0]!.twoLevels);
+    const codes = async (more: string) => (await faultsOf(() => understand(toml(more), {}, "toml"))).map((f) => f.code);
+    expect(await codes("companion = 3020.0\n")).toEqual(["companion-without-ratio"]);
+    expect(await codes("ratio = 5\n")).toEqual(["ratio-without-companion"]);
+    expect(await codes("companion = 3020.0\nratio = 0\n")).toEqual(["ratio"]);
+    expect(await codes("companion = 3000\nratio = 5\n")).toEqual(["companion-equals-band"]);
+  });
+
+  it("is refused beside subtracted spacings, which are no positions", async () => {
+    const faults = await faultsOf(() => read("", "1-0,3000.0(2),3020,5", { spacings: "subtracted" }));
+    expect(faults.map(({ code }) => code)).toEqual(["companion-of-subtracted"]);
+  });
+
+  it("a companion stronger than its band is used, and said", async () => {
+    const { band, warnings } = await read("", "1-0,3000.0(2),3020,0.5");
+    expect(Math.abs(band.position - (0.5 * 3000 + 3020) / 1.5)).toBeLessThan(1e-9); // rounding
+    expect(warnings.find(({ code }) => code === "companion-corrected")!.message).toContain("the stronger of the two");
+    const usual = (await read("", "1-0,3000.0(2),3020,2")).warnings;
+    expect(usual.find(({ code }) => code === "companion-corrected")!.message).not.toContain("the stronger of the two");
   });
 });
 

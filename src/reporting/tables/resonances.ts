@@ -44,6 +44,16 @@ function notesOn({ window, standsOut, without, candidates, test }: Resonances, a
         ? `* ${standsOut} stands out in the fit, in the direction this level would push it; coupling: what would explain its obs − calc, two levels.`
         : `${standsOut} stands out in the fit, and no candidate would push it that way.`,
     );
+  const seen = candidates.filter(({ companionGap }) => companionGap !== null);
+  for (const label of new Set(seen.map(({ band }) => band))) {
+    const [nearest] = seen
+      .filter(({ band }) => band === label)
+      .sort((a, b) => Math.abs(a.companionGap!) - Math.abs(b.companionGap!));
+    const dark = nearest!.position + nearest!.companionGap!;
+    notes.push(
+      `The companion of ${label} lay at ${fixed(dark, 1)} cm⁻¹ by itself; nearest to that: ${nearest!.state}, at ${fixed(nearest!.position, 1)} cm⁻¹.`,
+    );
+  }
   if (test === null) return notes;
   const near = `${fixed(test.position, 1)} cm⁻¹`;
   if (test.kind === "overtone")
