@@ -1,7 +1,8 @@
 import { spawnSync } from "node:child_process";
-import { mkdtempSync } from "node:fs";
+import { mkdtempSync, rmSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join, resolve } from "node:path";
+import { afterAll } from "vitest";
 
 /** What a run of the built command left. */
 export interface Ran {
@@ -27,8 +28,17 @@ export function rungwise(
   return { code: status, out: stdout, err: stderr };
 }
 
-/** A new empty folder. */
-export const emptyFolder = () => mkdtempSync(join(tmpdir(), "rungwise-test-"));
+const folders: string[] = [];
+afterAll(() => {
+  for (const folder of folders) rmSync(folder, { recursive: true, force: true });
+});
+
+/** A new empty folder; gone when the tests of the file are over. */
+export function emptyFolder(): string {
+  const folder = mkdtempSync(join(tmpdir(), "rungwise-test-"));
+  folders.push(folder);
+  return folder;
+}
 
 /** Split a command line of the help or the README into words, as a shell does for plain and quoted words. */
 export function shellWords(line: string): string[] {
