@@ -1,11 +1,12 @@
 import type { Series } from "../bands/index.ts";
 import { dot, timesInverse } from "../fitting/index.ts";
+import type { Warning } from "../messages/index.ts";
 import type { Model } from "../models/index.ts";
 import { interval, normalUpperTail, studentUpperTail } from "../quantity/index.ts";
 import { solutionOf } from "./analyse.ts";
 import { morseDe } from "./dissociation/morse.ts";
 import type { Comparison, Difference } from "./document.ts";
-import type { AnalysisOptions } from "./options.ts";
+import type { AnalysisOptions, Sharing } from "./options.ts";
 import { addScaled, varianceOf } from "./propagation.ts";
 import type { Solution } from "./solution.ts";
 
@@ -28,37 +29,74 @@ interface Side {
   readonly degreesOfFreedom: number | null;
   /** what one standard uncertainty of each error common to all series does to the constants, by cause */
   readonly common: ReadonlyMap<string, readonly number[]>;
+  /** the joint fit it belongs to */
+  readonly sharing: Sharing | null;
 }
 
 /**
- * Differences of constants and of D0 between all pairs of series, and between each and constants given from elsewhere: second less first. Series are
- * independent but for errors common to them all (calibration, exciting line, per quantum, groups of one name), with p̂ = C·XᵀV⁻¹y: one standard uncertainty c of such a cause
- * moves the constants by g = C·XᵀV⁻¹c, so the covariance of two series is Σ g·gᵀ. The probability is two-sided, of so large a difference by chance.
+ * Differences of constants and of D0 between all pairs of up to twelve series, and between each and constants given from elsewhere: second less first. Series
+ * are independent but for errors common to them all (calibration, exciting line, per quantum, groups of one name), with p̂ = C·XᵀV⁻¹y: one standard uncertainty c
+ * of such a cause moves the constants by g = C·XᵀV⁻¹c, so the covariance of two series is Σ g·gᵀ; where constants are shared it is that of the joint fit.
+ * The probability is two-sided, of so large a difference by chance.
  */
 export function compareAll(
   series: readonly Series[],
   model: Model,
   optionsOf: (one: Series) => AnalysisOptions,
   given: GivenConstants | null,
-): Comparison[] {
-  if (model.well === undefined || series.length > MOST_SERIES || (series.length < 2 && given === null)) return [];
+): { readonly comparisons: Comparison[]; readonly warnings: Warning[] } {
+  const byPairs = series.length > 1 && series.length <= MOST_SERIES;
+  if (model.well === undefined || (!byPairs && given === null)) return { comparisons: [], warnings: [] };
   const sides = series.map((one) => sideOf(solutionOf(one, model, optionsOf(one)).solution));
-  const pairs: (readonly [Side, Side])[] = sides.flatMap((a, i) => sides.slice(i + 1).map((b) => [a, b] as const));
+  const pairs: (readonly [Side, Side])[] = byPairs
+    ? sides.flatMap((a, i) => sides.slice(i + 1).map((b) => [a, b] as const))
+    : [];
   if (given !== null) {
-    const elsewhere: Side = { name: "given constants", ...given, degreesOfFreedom: null, common: new Map() };
+    const elsewhere: Side = {
+      name: "given constants",
+      ...given,
+      degreesOfFreedom: null,
+      common: new Map(),
+      sharing: null,
+    };
     for (const side of sides) pairs.push([elsewhere, side]);
   }
-  return pairs.map(([first, second]) => ({
+  return { comparisons: pairs.map(([first, second]) => comparison(first, second, model)), warnings: aboutTerms(pairs) };
+}
+
+function comparison(first: Side, second: Side, model: Model): Comparison {
+  const shared = (first.sharing === null || second.sharing === null ? [] : first.sharing.constants)
+    .filter(({ spread }) => spread === 0)
+    .map(({ key }) => key);
+  return {
     first: first.name,
     second: second.name,
     differences: [
       ...first.keys
-        .filter((key) => second.keys.includes(key) && !first.common.has(`shared ${key}`))
+        .filter((key) => second.keys.includes(key) && !shared.includes(key))
         .map((key) => differenceOf(key, first, second, unitOf(key))),
-      ...d0Difference(first, second, model),
+      ...(shared.length === first.keys.length ? [] : d0Difference(first, second, model)),
     ],
-    commonErrors: [...first.common.keys()].filter((cause) => second.common.has(cause)),
-  }));
+    commonErrors: [
+      ...[...first.common.keys()].filter((cause) => second.common.has(cause)),
+      ...shared.map((key) => `shared ${key}`),
+    ],
+  };
+}
+
+/** ωe of two constants and ωe of three are not the same quantity: the terms left out are in them. */
+function aboutTerms(pairs: readonly (readonly [Side, Side])[]): Warning[] {
+  const unlike = pairs.filter(([a, b]) => a.keys.length !== b.keys.length);
+  if (unlike.length === 0) return [];
+  const [[a, b]] = unlike as [readonly [Side, Side]];
+  const counts = ({ name, keys }: Side) => `${name} (${keys.length})`;
+  const more = unlike.length > 1 ? ` and ${unlike.length - 1} more pair${unlike.length > 2 ? "s" : ""}` : "";
+  return [
+    {
+      code: "terms-unlike",
+      message: `${counts(a)} and ${counts(b)}${more} are compared with unlike numbers of constants: the terms that one leaves out shift its others, so the difference is not only that of the bonds; give the same --terms to all`,
+    },
+  ];
 }
 
 function sideOf({ series, fit, by, errors, sigmaKnown, options }: Solution): Side {
@@ -73,16 +111,6 @@ function sideOf({ series, fit, by, errors, sigmaKnown, options }: Solution): Sid
         by.covariance!.map((row) => dot(row, onto)),
       );
     });
-  // Given a constant that series share, their other constants are independent: p moves with it by C_ks/√C_ss.
-  const { shared } = options;
-  const at = shared == null || shared.spread > 0 ? -1 : fit.keys.indexOf(shared.key);
-  if (at >= 0 && by.covariance !== null) {
-    const u = Math.sqrt(by.covariance[at]![at]!);
-    common.set(
-      `shared ${shared!.key}`,
-      by.covariance.map((row) => row[at]! / u),
-    );
-  }
   return {
     name: series.name,
     keys: fit.keys,
@@ -90,6 +118,7 @@ function sideOf({ series, fit, by, errors, sigmaKnown, options }: Solution): Sid
     covariance: by.covariance,
     degreesOfFreedom: by.degreesOfFreedom,
     common,
+    sharing: options.sharing,
   };
 }
 
@@ -133,14 +162,25 @@ function difference(
   if (a == null || b == null)
     return { key, difference: { value, standardUncertainty: null, interval95: null, unit: "cm-1" }, probability: null };
   let both = 0;
-  for (const [cause, effect] of first.common) {
-    const other = second.common.get(cause);
-    if (other !== undefined) both += dot(gradientOf(first), effect) * dot(gradientOf(second), other);
-  }
+  if (first.sharing !== null && second.sharing !== null) {
+    const between = first.sharing.covariance(first.sharing.place, second.sharing.place);
+    both = dot(
+      gradientOf(first),
+      between.map((row) => dot(row, gradientOf(second))),
+    );
+  } else
+    for (const [cause, effect] of first.common) {
+      const other = second.common.get(cause);
+      if (other !== undefined) both += dot(gradientOf(first), effect) * dot(gradientOf(second), other);
+    }
   const variance = Math.max(0, a + b - 2 * both);
   // Rounding of the same number: a shared constant differs by nothing.
   const u = variance < 1e-12 * (a + b) ? 0 : Math.sqrt(variance);
-  const dof = effectiveDegrees(a, first.degreesOfFreedom, b, second.degreesOfFreedom);
+  // One estimate of the scatter stands behind both sides of a joint fit.
+  const dof =
+    first.sharing !== null && second.sharing !== null
+      ? first.degreesOfFreedom
+      : effectiveDegrees(a, first.degreesOfFreedom, b, second.degreesOfFreedom);
   const t = Math.abs(value) / u;
   return {
     key,

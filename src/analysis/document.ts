@@ -27,7 +27,7 @@ export interface FitDocument {
   readonly request: Readonly<Record<string, string>>;
   /** the file read, or null for flags; sha256 of its bytes */
   readonly input: { readonly source: string; readonly sha256: string } | null;
-  /** pairs of up to twelve series, and each against --compare; empty otherwise */
+  /** pairs of up to twelve series, and each series against --compare; empty otherwise */
   readonly comparisons: readonly Comparison[];
   readonly series: readonly SeriesResult[];
   readonly warnings: readonly Warning[];

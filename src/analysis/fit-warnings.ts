@@ -12,7 +12,7 @@ export function fitWarnings(solution: Solution, termsChosen: boolean): Warning[]
     ...aboutTermsAndBands(solution, termsChosen),
     ...aboutRobust(solution),
     ...aboutMedium(solution),
-    ...aboutShared(solution),
+    ...aboutSharing(solution),
   ];
 }
 
@@ -121,15 +121,12 @@ function aboutMedium(solution: Solution): Warning[] {
   ];
 }
 
-/** Not a fault: what the other series say is an observation the reader does not see among the bands. */
-function aboutShared({ options: { shared } }: Solution): Warning[] {
-  if (shared === null) return [];
-  const { key, value, sigma, spread, from } = shared;
-  return [
-    {
-      code: "constant-shared",
-      message: `${key} is shared${spread > 0 ? ` within ${spread} cm-1` : ""}: ${from.join(", ")} put${from.length === 1 ? "s" : ""} it at ${short(value, 7)} ± ${short(sigma, 2)} cm-1, which counts as one more observation here; that holds if the bonds are alike`,
-      about: key,
-    },
-  ];
+/** Not a fault: a reader does not see the bands of the other series among those of this one. */
+function aboutSharing({ options: { sharing }, stated }: Solution): Warning[] {
+  if (sharing === null) return [];
+  return sharing.constants.map(({ key, spread }) => ({
+    code: "constant-shared",
+    message: `${key} is ${spread > 0 ? `alike within ${spread} cm-1` : "the same"} in ${sharing.names.join(", ")}, by one fit of all ${sharing.bands} bands (its χ² on ${stated.degreesOfFreedom} degree${stated.degreesOfFreedom === 1 ? "" : "s"} of freedom stands here): that holds if the bonds are alike; compare with a fit without --share where the bands allow one`,
+    about: key,
+  }));
 }

@@ -5,6 +5,7 @@ import type { Solution } from "./solution.ts";
 /** How good the fit is, in numbers. */
 export function qualityOf(solution: Solution): Quality {
   const { stated, fit, sigmaKnown, used, excess, probability, treated } = solution;
+  const { sharing } = solution.options;
   const dof = stated.degreesOfFreedom;
   const squares = fit.residuals.reduce((sum, r) => sum + r * r, 0);
   const constants = stated.keys.length - Object.values(solution.options.fixed).filter((f) => f.sigma === null).length;
@@ -16,9 +17,10 @@ export function qualityOf(solution: Solution): Quality {
     reducedChiSquare: sigmaKnown && dof > 0 ? stated.chiSquare / dof : null,
     probability,
     rms: Math.sqrt(squares / used.length),
-    standardDeviation: dof > 0 ? Math.sqrt(squares / dof) : null,
+    // The degrees of freedom of a joint fit are not those of these residuals.
+    standardDeviation: dof > 0 && sharing === null ? Math.sqrt(squares / dof) : null,
     excess,
-    ...informationCriteria(sigmaKnown, stated.chiSquare, used.length, constants),
+    ...informationCriteria(sigmaKnown, stated.chiSquare, sharing?.bands ?? used.length, sharing?.fitted ?? constants),
     intervalDegreesOfFreedom: solution.by.degreesOfFreedom,
     leaveOneOutRms:
       errors.length < used.length ? null : Math.sqrt(errors.reduce((sum, e) => sum + e * e, 0) / errors.length),

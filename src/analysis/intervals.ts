@@ -1,6 +1,7 @@
 import {
   covarianceOf,
   type Distribution,
+  dot,
   drawConstants,
   type ProfileRequest,
   profileInterval,
@@ -14,7 +15,7 @@ import { coverageFactor, type Quantity } from "../quantity/index.ts";
 import { morseDe } from "./dissociation/morse.ts";
 import { coordinate, innerMorse, morseScalar, positionScalar } from "./interval-scalars.ts";
 import type { IntervalRecord, SeriesResult } from "./result.ts";
-import type { Solution } from "./solution.ts";
+import { outsideWith, type Solution } from "./solution.ts";
 
 /** A number of the result that gets an interval of its own: where it stands, and what it is as a function of the constants. */
 interface Target {
@@ -159,23 +160,30 @@ function byProfile(solution: Solution): Refine {
 /** The treated problem as the nonlinear core wants it, priors as further data; variances absolute, so that χ² rises in units of one. */
 function profileRequest({ used, model, options, errors, treatment, fit, sigmaKnown }: Solution): ProfileRequest {
   const n = used.length;
-  const { parameters, evaluate } = model.prepare(used, options);
+  const prepared = model.prepare(used, options);
+  const { parameters, evaluate } = prepared;
+  const observed = used.map((band) => band.position);
+  const others = outsideWith(prepared, observed, errors, options, treatment).outside ?? { rows: [], right: [] };
   const priors = parameters.flatMap((p, k) => (p.prior === undefined ? [] : [{ k, ...p.prior }]));
-  const size = n + priors.length;
+  const size = n + priors.length + others.rows.length;
   const v = covarianceOf(errors, treatment, n);
   const variance = sigmaKnown ? 1 : fit.chiSquare / fit.degreesOfFreedom;
   const covariance = Array.from({ length: size }, (_, i) =>
     Array.from({ length: size }, (_, j) => {
       if (i < n && j < n) return v[i * n + j]! * variance;
-      return i === j ? priors[i - n]!.sigma ** 2 : 0;
+      return i === j ? (priors[i - n]?.sigma ?? 1) ** 2 : 0;
     }),
   );
   const unit = (at: number) => parameters.map((_, k) => Number(k === at));
   return {
-    y: [...used.map((band) => band.position), ...priors.map(({ value }) => value)],
+    y: [...observed, ...priors.map(({ value }) => value), ...others.right],
     covariance,
-    model: (p) => [...evaluate(p).calculated, ...priors.map(({ k }) => p[k]!)],
-    jacobian: (p) => [...evaluate(p).jacobian, ...priors.map(({ k }) => unit(k))],
+    model: (p) => [
+      ...evaluate(p).calculated,
+      ...priors.map(({ k }) => p[k]!),
+      ...others.rows.map((row) => dot(row, p)),
+    ],
+    jacobian: (p) => [...evaluate(p).jacobian, ...priors.map(({ k }) => unit(k)), ...others.rows],
     best: fit.values,
     deviations: fit.covariance!.map((row, k) => Math.sqrt(row[k]!)),
     chiSquare: fit.chiSquare / variance,

@@ -1,6 +1,6 @@
 import { fitLinear, UndeterminedError } from "../fitting/index.ts";
 import { type Stated, type Step, stepTest, TERM_LEVEL } from "./choice-of-terms.ts";
-import type { Solution } from "./solution.ts";
+import { outsideWith, type Solution } from "./solution.ts";
 
 /** The fit with one more constant, and the test of it. */
 export interface OneMore {
@@ -16,7 +16,8 @@ export function oneMoreTerm(solution: Solution): OneMore | null {
   if (model.terms === null || terms >= model.terms.most || stated.degreesOfFreedom < 1) return null;
   const observed = used.map((band) => band.position);
   try {
-    const more = fitLinear({ ...model.prepare(used, { ...options, terms: terms + 1 }), observed, errors });
+    const prepared = model.prepare(used, { ...options, terms: terms + 1 });
+    const more = fitLinear({ ...prepared, observed, errors, ...outsideWith(prepared, observed, errors, options) });
     const step = stepTest(solution, { stated: more, sigmaKnown });
     if (step === null) return null;
     const calledFor = step.probability < TERM_LEVEL[sigmaKnown ? "known" : "unknown"];

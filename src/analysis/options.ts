@@ -1,4 +1,4 @@
-import type { RobustKind, Treatment } from "../fitting/index.ts";
+import type { ErrorModel, Outside, RobustKind, Treatment } from "../fitting/index.ts";
 import type { ModelOptions } from "../models/index.ts";
 import type { AirConditions } from "../quantity/index.ts";
 
@@ -12,18 +12,38 @@ export interface Mode {
   readonly sigma: number | null;
 }
 
-/** One constant in common with other series: `value` ± `sigma` is what they say of it, which `fixed` holds as an observation. */
+/** A constant that series have in common, or (spread > 0, cm-1) that is scattered about a common mean with that standard deviation. */
 export interface SharedConstant {
   readonly key: string;
-  readonly value: number;
-  readonly sigma: number;
   readonly spread: number;
-  readonly from: readonly string[];
-  /** of the residuals of the joint fit */
+}
+
+/** The bands of one series as a fit sees them. */
+export interface OwnBands {
+  readonly jacobian: readonly (readonly number[])[];
+  readonly observed: readonly number[];
+  readonly errors: ErrorModel;
+}
+
+/** The fit of all series in which constants are shared, seen from one of them. */
+export interface Sharing {
+  readonly constants: readonly SharedConstant[];
+  /** of all series */
+  readonly names: readonly string[];
+  /** of this one among them */
+  readonly place: number;
+  /** of the residuals of all bands */
   readonly treatment: Treatment;
   readonly excess: { readonly kind: ExcessKind; readonly value: number | null; readonly applied: boolean };
   /** of the joint fit, where its treatment was estimated; otherwise null */
   readonly degreesOfFreedom: number | null;
+  /** bands of all series, and constants fitted to them */
+  readonly bands: number;
+  readonly fitted: number;
+  /** what the bands of the other series say of the constants of this one, given its own */
+  outside(own: OwnBands, treatment: Treatment): Outside;
+  /** between the constants of two series, by their places */
+  covariance(a: number, b: number): readonly (readonly number[])[];
 }
 
 /** Everything `analyse` may be told beside the series and the model; nothing is optional here. */
@@ -54,8 +74,8 @@ export interface AnalysisOptions extends ModelOptions {
   readonly diatomic: boolean;
   /** an accepted ΔH°(298.15 K) in kJ/mol to compare with; null: none */
   readonly acceptedEnthalpy: { readonly value: number; readonly sigma: number | null } | null;
-  /** a constant that other series have a say in, and how the residuals of all of them are treated; null: none */
-  readonly shared: SharedConstant | null;
+  /** constants in common with other series; null: none */
+  readonly sharing: Sharing | null;
   /** rotational constants in cm-1, bond length in Å */
   readonly be: number | null;
   readonly alphaE: number | null;

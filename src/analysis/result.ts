@@ -105,6 +105,7 @@ export interface IntervalRecord {
 
 export interface Quality {
   readonly bands: number;
+  /** with constants in common (--share) these, χ², its probability and the AIC are those of the one fit of all series */
   readonly degreesOfFreedom: number;
   /** null when no uncertainty was stated */
   readonly chiSquare: number | null;
@@ -113,7 +114,7 @@ export interface Quality {
   readonly probability: number | null;
   /** root mean square residual, cm-1 */
   readonly rms: number;
-  /** sqrt(RSS/degreesOfFreedom), cm-1 */
+  /** sqrt(RSS/degreesOfFreedom), cm-1; null with constants in common */
   readonly standardDeviation: number | null;
   readonly excess: {
     readonly kind: "scatter" | "birge" | "none";

@@ -8,6 +8,7 @@ import {
   fitRobust,
   fitWithScatter,
   type LinearFit,
+  type Prepared,
   type Problem,
   type Treatment,
   UNTREATED,
@@ -60,7 +61,9 @@ export const IMPROBABLE = 0.05;
 export function solve(series: Series, model: Model, options: AnalysisOptions): Solution {
   const used = series.bands.filter((band) => band.use);
   const errors = errorModelOf(series, used, model);
-  const problem: Problem = { ...model.prepare(used, options), observed: used.map((band) => band.position), errors };
+  const prepared = model.prepare(used, options);
+  const observed = used.map((band) => band.position);
+  const problem: Problem = { ...prepared, observed, errors, ...outsideWith(prepared, observed, errors, options) };
   const curved = problem.linear ? null : curvedStart(series, model, used, problem, options);
   const stated = curved?.fit ?? determined(series, model, used, problem, options, () => fitLinear(problem));
   const sigmaKnown = errors.sigmas !== null;
@@ -97,7 +100,7 @@ export function solve(series: Series, model: Model, options: AnalysisOptions): S
     probability,
     by: {
       covariance: excess.fit.covariance,
-      degreesOfFreedom: options.shared !== null ? options.shared.degreesOfFreedom : estimated ? dof : null,
+      degreesOfFreedom: options.sharing !== null ? options.sharing.degreesOfFreedom : estimated ? dof : null,
       coverage: options.coverage,
     },
   };
@@ -155,9 +158,11 @@ export function treat(
   options: AnalysisOptions,
 ): Treated {
   const none = { kind: "none", value: null, applied: false, weights: null } as const;
-  if (options.shared !== null) {
-    const { treatment, excess } = options.shared;
-    return { ...excess, weights: null, treatment, fit: excess.applied ? fitLinear(problem, treatment) : stated };
+  if (options.sharing !== null) {
+    const { treatment, excess } = options.sharing;
+    if (!excess.applied) return { ...excess, weights: null, treatment, fit: stated };
+    const outside = outsideWith(problem, problem.observed, problem.errors, options, treatment);
+    return { ...excess, weights: null, treatment, fit: fitLinear({ ...problem, ...outside }, treatment) };
   }
   if (options.robust !== null) return { ...none, ...fitRobust(problem, options.robust) };
   const treated = (treatment: Treatment, kind: "scatter" | "birge", value: number): Treated => ({
@@ -176,6 +181,19 @@ export function treat(
   return options.excess === "birge"
     ? treated({ scatter: 0, factor: value }, "birge", value)
     : treated({ scatter: value, factor: 1 }, "scatter", value);
+}
+
+/** What other series say, as part of a problem; nothing where no constant is shared. */
+export function outsideWith(
+  prepared: Prepared,
+  observed: readonly number[],
+  errors: ErrorModel,
+  { sharing }: Pick<AnalysisOptions, "sharing">,
+  treatment: Treatment = UNTREATED,
+): Pick<Problem, "outside"> {
+  if (sharing === null) return {};
+  const { jacobian } = prepared.evaluate(prepared.parameters.map(() => 0));
+  return { outside: sharing.outside({ jacobian, observed, errors }, treatment) };
 }
 
 /** Data that leave together: repeats of one band. */

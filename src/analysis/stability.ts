@@ -3,7 +3,7 @@ import { type ErrorModel, fitValues, type Treatment, UndeterminedError } from ".
 import { morseDe } from "./dissociation/morse.ts";
 import { errorModel } from "./error-model.ts";
 import type { StabilityRow } from "./result.ts";
-import type { Solution } from "./solution.ts";
+import { outsideWith, type Solution } from "./solution.ts";
 
 /** The same model fitted to the lowest bands alone, one row for each number of bands that determines it, up to all of them. */
 export function stabilityRows(solution: Solution): StabilityRow[] {
@@ -46,12 +46,13 @@ function lowestBands(solution: Solution, order: readonly number[]): (count: numb
   const needed = parameters.filter((p) => p.held === undefined && p.prior === undefined).length;
   return (count) => {
     // Too few bands are seen beforehand: an exception costs more than a fit.
-    if (new Set(bands.slice(0, count).map((band) => band.label)).size < needed) return null;
+    if (options.sharing === null && new Set(bands.slice(0, count).map((band) => band.label)).size < needed) return null;
     const rows = { calculated: [], jacobian: jacobian.slice(0, count) };
     const errors = errorsOf(solution, bands.slice(0, count), order);
     try {
-      const problem = { parameters, linear, evaluate: () => rows, observed: observed.slice(0, count), errors };
-      return fitValues(problem, treatmentOf(solution, order));
+      const treatment = treatmentOf(solution, order);
+      const lowest = { parameters, linear, evaluate: () => rows, observed: observed.slice(0, count), errors };
+      return fitValues({ ...lowest, ...outsideWith(lowest, lowest.observed, errors, options, treatment) }, treatment);
     } catch (error) {
       if (error instanceof UndeterminedError) return null;
       throw error;

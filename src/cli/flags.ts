@@ -120,8 +120,8 @@ export const fitFlags: readonly Flag[] = [
   { name: "window", value: "CM-1", help: "how far from an overtone they may lie (default 50)" },
   {
     name: "share",
-    value: "KEY",
-    help: 'constant common to all series, such as wexe, or "wexe±0.5": alike to 0.5 cm-1',
+    value: '"KEY …"',
+    help: 'constants common to all series, such as wexe, or "wexe±0.5": alike to 0.5 cm-1',
   },
   {
     name: "compare",

@@ -32,7 +32,7 @@ const SHARE = 1e-8;
 const MOST = 100;
 
 /**
- * Compute a stored result anew from its input and its settings and compare every number and word of its series.
+ * Compute a stored result anew from its input and its settings and compare every number and word of its series and of their differences.
  * @throws InputError exit 2 when there is no result to check, or as `fit`
  */
 export async function check({ stored, input }: CheckRequest): Promise<CheckDocument> {
@@ -43,6 +43,7 @@ export async function check({ stored, input }: CheckRequest): Promise<CheckDocum
   const again = await fit({ ...Object.fromEntries(rest), input });
   const differences: Difference[] = [];
   compare(document.input?.sha256, again.input?.sha256, "input.sha256", differences);
+  compare(document.comparisons, again.comparisons, "comparisons", differences);
   compare(document.series, again.series, "series", differences);
   return { schemaVersion: 1, tool, ok: differences.length === 0, differences: differences.slice(0, MOST) };
 }

@@ -58,6 +58,13 @@ export function convertConstants({
       `write one of ${formNames.join(", ")}`,
     );
   }
+  if (stored !== undefined && correlation !== undefined)
+    throw fault(
+      "--correlation",
+      "correlation-alone",
+      "a result.json carries the correlations of its constants",
+      "leave it out, or give --constants",
+    );
   const sources = stored === undefined ? [fromText(constants ?? "", correlation)] : fromStored(stored);
   return {
     schemaVersion: 1,

@@ -22,6 +22,12 @@ export function* fitEach({ series, options, optionsOf }: Gathered): Generator<Se
 
 /** Everything of the document but the series. */
 export async function documentHead(gathered: Gathered, request: FitRequest): Promise<Omit<FitDocument, "series">> {
+  const { comparisons, warnings } = compareAll(
+    gathered.series,
+    gathered.options.model,
+    gathered.optionsOf,
+    gathered.given,
+  );
   return {
     schemaVersion: 1,
     tool,
@@ -29,8 +35,8 @@ export async function documentHead(gathered: Gathered, request: FitRequest): Pro
       [...gathered.settings].map(([name, { value }]) => [name, value] as const).sort(([a], [b]) => (a < b ? -1 : 1)),
     ),
     input: request.input === undefined ? null : await identify(request.input.source, request.input.text),
-    warnings: gathered.warnings,
-    comparisons: compareAll(gathered.series, gathered.options.model, gathered.optionsOf, gathered.given),
+    warnings: [...gathered.warnings, ...warnings],
+    comparisons,
   };
 }
 

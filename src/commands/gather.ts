@@ -1,4 +1,4 @@
-import { type AnalysisOptions, type GivenConstants, shareConstant } from "../analysis/index.ts";
+import { type AnalysisOptions, type GivenConstants, shareConstants } from "../analysis/index.ts";
 import {
   mergeSettings,
   readInput,
@@ -47,14 +47,18 @@ export async function gather(request: FitRequest): Promise<Gathered> {
   if (options !== null && (options.analysis.intervals === "profile" || options.model.starts !== undefined))
     await loadNonlinearCore();
   if (wrong.length > 0 || options === null || result === null) throw new InputError(distinct(wrong));
-  const share = readShare(settings);
-  const each = share === null ? null : shareConstant(result.series, options.model, options.analysis, share);
+  const given = readGiven(settings, options.model);
+  const shared = readShare(settings);
+  const each =
+    shared === null
+      ? null
+      : shareConstants(result.series, options.model, options.analysis, shared, settings.get("share")!.place);
   return {
     settings,
     series: result.series,
     options,
     optionsOf: (one) => each?.get(one) ?? options.analysis,
-    given: readGiven(settings, options.model),
+    given,
     warnings: result.warnings,
   };
 }

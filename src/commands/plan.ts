@@ -46,7 +46,17 @@ export async function plan(request: PlanRequest): Promise<PlanDocument> {
 }
 
 async function fromBands(request: FitRequest, options: Omit<PlanOptions, "upTo">): Promise<Plan[]> {
-  const { series, options: read, optionsOf } = await gather(request);
+  const { settings, series, options: read, optionsOf } = await gather(request);
+  const place = settings.get("share")?.place;
+  if (place !== undefined && series.some(({ shared }) => shared.length > 0))
+    throw new InputError([
+      {
+        code: "share-not-possible",
+        place,
+        what: "a plan does not follow errors that are common to series which share a constant",
+        mend: "leave --share out, or the common errors (--shared-sigma, --laser, --per-quantum-sigma, groups)",
+      },
+    ]);
   return series.map((one) => planNext(one, read.model, optionsOf(one), { ...options, upTo: read.analysis.upTo }));
 }
 

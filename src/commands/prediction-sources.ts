@@ -45,6 +45,15 @@ export async function sourcesOf({ constants, correlation, stored, ...rest }: Sou
         mend: "give bands, a result.json, or --constants",
       },
     ]);
+  if (correlation !== undefined && constants === undefined)
+    throw new InputError([
+      {
+        code: "correlation-alone",
+        place: { source: "--correlation" },
+        what: "bands and a result.json carry the correlations of their constants",
+        mend: "leave it out, or give --constants",
+      },
+    ]);
   if (stored !== undefined) return fromStored(stored, rest);
   return constants !== undefined ? fromConstants(constants, correlation, rest) : fromBands(rest);
 }
@@ -141,6 +150,7 @@ async function fromConstants(
     const at = constants.findIndex((constant) => constant.key === key);
     const read = readMeasurement(value ?? "");
     if (at < 0) fault(`there is no constant "${key}"`, `write some of ${constants.map((c) => c.key).join(", ")}`);
+    else if (values[at] !== null) fault(`"${key}" stands there twice`, "name each constant once");
     else if (!read.ok) fault(`"${key}" has no number`, `write ${key}=52.8 or ${key}=52.8(1)`);
     else {
       values[at] = read.value;
@@ -161,6 +171,15 @@ async function fromConstants(
   if (faults.length > 0) throw new InputError(faults);
   const used = values.slice(0, Math.max(terms, least)).map((value) => value ?? 0);
   const r = readCorrelation(correlation, used.length);
+  if (r !== null && !anyUncertain)
+    throw new InputError([
+      {
+        code: "correlation-without-uncertainty",
+        place: { source: "--correlation" },
+        what: "the constants carry no uncertainties",
+        mend: "write them as in we=2990.95(1)",
+      },
+    ]);
   const covariance = anyUncertain
     ? used.map((_, i) =>
         used.map((_, j) => (r?.[i]?.[j] ?? Number(i === j)) * Math.sqrt((variances[i] ?? 0) * (variances[j] ?? 0))),

@@ -1,4 +1,4 @@
-import type { GivenConstants, Share } from "../analysis/index.ts";
+import type { GivenConstants, SharedConstant } from "../analysis/index.ts";
 import type { Settings } from "../bands/index.ts";
 import { type Fault, InputError } from "../messages/index.ts";
 import type { Model } from "../models/index.ts";
@@ -6,30 +6,52 @@ import { readMeasurement } from "../quantity/index.ts";
 import { readAssignments } from "./assignments.ts";
 import { readCorrelation } from "./correlation.ts";
 
-/** `--share wexe`, or `--share "wexe±0.5"` for constants alike to half a wavenumber; null without one. @throws InputError */
-export function readShare(settings: Settings): Share | null {
+/** `--share "wexe weye"`, or `"wexe±0.5"` for constants alike to half a wavenumber; null without one. @throws InputError */
+export function readShare(settings: Settings): SharedConstant[] | null {
   const setting = settings.get("share");
   if (setting === undefined) return null;
-  const [, key = "", spread] = /^\s*([a-z]\w*)\s*(?:(?:±|\+\/?-)\s*(.+))?$/i.exec(setting.value) ?? [];
-  const read = spread === undefined ? null : readMeasurement(spread);
-  if (key !== "" && (read === null || (read.ok && read.value > 0)))
-    return { key: key.toLowerCase(), spread: read?.ok === true ? read.value : 0 };
-  throw new InputError([
-    {
-      code: "share",
-      place: setting.place,
-      what: `"${setting.value}" names no constant to share`,
-      mend: 'write one constant, such as --share wexe, or "wexe±0.5" if it may differ by so much (standard deviation)',
-    },
-  ]);
+  const fault = (what: string) =>
+    new InputError([
+      {
+        code: "share",
+        place: setting.place,
+        what,
+        mend: 'write constants such as wexe or "wexe weye", or "wexe±0.5" for one that may differ by so much (standard deviation)',
+      },
+    ]);
+  const words = setting.value
+    .replace(/\s*(?:±|\+\/?-)\s*/g, "±")
+    .split(/[\s,;]+/)
+    .filter((word) => word !== "");
+  const read = words.map((word) => {
+    const [, key = "", spread] = /^([a-z]\w*)(?:±(.+))?$/i.exec(word) ?? [];
+    const within = spread === undefined ? null : readMeasurement(spread);
+    if (key === "" || (within !== null && !(within.ok && within.value > 0)))
+      throw fault(`"${word}" names no constant to share`);
+    return { key: key.toLowerCase(), spread: within?.ok === true ? within.value : 0 };
+  });
+  if (read.length === 0) throw fault("names no constant to share");
+  const twice = read.find(({ key }, i) => read.findIndex((other) => other.key === key) !== i);
+  if (twice !== undefined) throw fault(`"${twice.key}" stands there twice`);
+  return read;
 }
 
 /** `--compare "we=2990.9463(5) wexe=52.8186(9)"` with `--correlation`; null without it. @throws InputError */
-export function readGiven(settings: Settings, { constants, name }: Model): GivenConstants | null {
+export function readGiven(settings: Settings, { constants, name, well }: Model): GivenConstants | null {
   const setting = settings.get("compare");
-  if (setting === undefined) return null;
+  const correlation = settings.get("correlation");
+  if (setting === undefined) {
+    if (correlation === undefined) return null;
+    const what = "there are no constants from elsewhere that it could belong to";
+    const mend = "leave it out, or give --compare (fit) or --constants";
+    throw new InputError([{ code: "correlation-alone", place: correlation.place, what, mend }]);
+  }
   const faults: Fault[] = [];
   const fault = (what: string, mend: string) => faults.push({ code: "compare", place: setting.place, what, mend });
+  if (well === undefined) {
+    fault(`constants of the model ${name} are not compared`, "leave it out, or use --model oscillator");
+    throw new InputError(faults);
+  }
   const known = constants.map(({ key }) => key);
   const read = readAssignments(setting.value).map(({ key, value }) => {
     const number = readMeasurement(value ?? "");
@@ -48,7 +70,16 @@ export function readGiven(settings: Settings, { constants, name }: Model): Given
     );
   if (faults.length > 0) throw new InputError(faults);
   const sigmas = given.map(([one]) => one!.sigma);
-  const r = readCorrelation(settings.get("correlation")?.value, keys.length);
+  const r = readCorrelation(correlation?.value, keys.length);
+  if (r !== null && sigmas.some((sigma) => sigma === null))
+    throw new InputError([
+      {
+        code: "correlation-without-uncertainty",
+        place: correlation!.place,
+        what: "not every constant of --compare carries an uncertainty",
+        mend: "write them as in we=2990.95(1)",
+      },
+    ]);
   const covariance = sigmas.every((sigma) => sigma === null)
     ? null
     : sigmas.map((a, i) => sigmas.map((b, j) => (r?.[i]?.[j] ?? Number(i === j)) * (a ?? 0) * (b ?? 0)));

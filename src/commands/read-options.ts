@@ -46,7 +46,7 @@ export async function readOptions(
     excess: reader.choice<ExcessKind>("excess", ["scatter", "birge", "none"], "scatter"),
     scatter: reader.number("scatter", positive, "write the added scatter in cm-1, such as 0.3"),
     coverage: reader.number("coverage", (x) => x > 0 && x < 1, "write a probability between 0 and 1, such as 0.99"),
-    shared: null,
+    sharing: null,
     modes: readModes(reader, model),
     window: reader.number("window", positive, "write how far from an overtone to look, in cm-1, such as 50") ?? 50,
     groups: reader.choice("groups", ["carried", "fitted"], "carried"),

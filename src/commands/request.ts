@@ -67,7 +67,7 @@ export interface FitRequest {
   readonly modes?: string;
   /** how far from an overtone a combination may lie, cm-1; @default 50 */
   readonly window?: Word;
-  /** a constant common to all series, "wexe", or alike within a standard deviation, "wexe±0.5" */
+  /** constants common to all series, "wexe" or "wexe weye", or alike within a standard deviation, "wexe±0.5" */
   readonly share?: string;
   /** constants from elsewhere to compare with, such as "we=2990.9463(5) wexe=52.8186(9)" */
   readonly compare?: string;

@@ -41,7 +41,7 @@ export function fitLinear(problem: Problem, treatment: Treatment = UNTREATED): L
   const priors = free.filter((k) => parameters[k]!.prior !== undefined);
   const white = whitening(errors, treatment, observed.length);
   const sigmaKnown = errors.sigmas !== null;
-  const degreesOfFreedom = observed.length + priors.length - free.length;
+  const degreesOfFreedom = observed.length + priors.length + (problem.outside?.rows.length ?? 0) - free.length;
   const solve = (unit: number) => solveWhitened(problem, jacobian, free, priors, white, unit);
 
   let triangle = solve(1);
@@ -106,7 +106,7 @@ export function fitValues(problem: Problem, treatment: Treatment): number[] {
 
 /** Solve for the free constants; with unknown σ a prior weighs unit/σ, where `unit` is the present residual deviation. */
 function solveWhitened(
-  { parameters, observed, errors }: Problem,
+  { parameters, observed, errors, outside }: Problem,
   jacobian: readonly (readonly number[])[],
   free: readonly number[],
   priors: readonly number[],
@@ -116,7 +116,8 @@ function solveWhitened(
   const n = observed.length;
   const columns = free.length;
   const stride = columns + 1;
-  const augmented = new Float64Array((n + priors.length) * stride);
+  const rows = n + priors.length + (outside?.rows.length ?? 0);
+  const augmented = new Float64Array(rows * stride);
   for (let i = 0; i < n; i++) {
     let y = observed[i]!;
     for (let k = 0; k < parameters.length; k++) y -= jacobian[i]![k]! * (parameters[k]!.held ?? 0);
@@ -130,9 +131,13 @@ function solveWhitened(
     augmented[(n + m) * stride + free.indexOf(k)] = weight;
     augmented[(n + m) * stride + columns] = weight * value;
   });
-  if (n + priors.length < columns)
-    throw new UndeterminedError(free.at(-1) ?? 0, `${n} data cannot determine ${columns} constants`);
-  const triangle = triangularise({ rows: n + priors.length, columns, augmented });
+  outside?.rows.forEach((row, m) => {
+    const at = (n + priors.length + m) * stride;
+    for (let j = 0; j < columns; j++) augmented[at + j] = row[free[j]!]!;
+    augmented[at + columns] = parameters.reduce((y, { held }, k) => y - row[k]! * (held ?? 0), outside.right[m]!);
+  });
+  if (rows < columns) throw new UndeterminedError(free.at(-1) ?? 0, `${n} data cannot determine ${columns} constants`);
+  const triangle = triangularise({ rows, columns, augmented });
   if (triangle.dependent >= 0)
     throw new UndeterminedError(free[triangle.dependent]!, "the data do not determine every constant");
   return triangle;

@@ -35,10 +35,18 @@ export interface Prepared {
   readonly evaluate: (p: readonly number[]) => Evaluation;
 }
 
+/** What data outside the problem say of its constants: rows·p = right, independent, each with a standard deviation of one. No treatment touches them. */
+export interface Outside {
+  readonly rows: readonly (readonly number[])[];
+  readonly right: readonly number[];
+}
+
 /** Everything a fit needs; no model is seen here. */
 export interface Problem extends Prepared {
   readonly observed: readonly number[];
   readonly errors: ErrorModel;
+  /** only with known σ; none when left out */
+  readonly outside?: Outside;
 }
 
 /** How residuals larger than the stated uncertainties are described: τ added in quadrature, a factor on every s, or weights. */

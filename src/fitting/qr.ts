@@ -52,6 +52,19 @@ export function triangularise({ rows, columns, augmented: a }: System): Triangle
   return { columns, r, scale, dependent, sumOfSquares, solution };
 }
 
+/** What is left of a system once its first columns are fitted away: the rows that no longer hold them, without those columns. */
+export function withoutColumns({ rows, columns, augmented: a }: System, first: number): number[][] {
+  const stride = columns + 1;
+  for (let j = 0; j < first; j++) {
+    let squares = 0;
+    for (let i = j; i < rows; i++) squares += a[i * stride + j]! ** 2;
+    if (squares > 0) reflect(a, rows, stride, j, Math.sqrt(squares));
+  }
+  return Array.from({ length: Math.max(0, rows - first) }, (_, i) => [
+    ...a.subarray((first + i) * stride + first, (first + i + 1) * stride),
+  ]);
+}
+
 function scaleColumns(a: Float64Array, rows: number, columns: number): Float64Array {
   const stride = columns + 1;
   const scale = new Float64Array(columns);

@@ -112,6 +112,15 @@ describe("differences between series", () => {
     ["an unknown constant", { compare: "w=1 wx=1" }, "compare"],
     ["one constant", { compare: "we=2990" }, "compare"],
     ["a gap", { compare: "we=2990 weye=0.1" }, "compare"],
+    ["a constant twice", { compare: "we=2990 we=2991 wexe=52" }, "compare"],
+    ["a correlation of nothing", { correlation: 0.9 }, "correlation-alone"],
+    [
+      "a correlation without uncertainties",
+      { compare: "we=2990 wexe=52", correlation: 0.9 },
+      "correlation-without-uncertainty",
+    ],
+    ["a correlation above one", { compare: "we=2990(1) wexe=52(1)", correlation: 2 }, "correlation"],
+    ["a model whose constants are not compared", { compare: "d=1 vd=2", model: "near-limit", power: 5 }, "compare"],
   ])("refuses %s", async (_, more, code) => {
     const error = await fit({ series: "2885.98 5667.98 8346.78", ...more }).catch((wrong: unknown) => wrong);
     expect((error as InputError).faults[0]!.code).toBe(code);
@@ -200,7 +209,19 @@ describe("a constant shared between series", () => {
   it.each<[string, FitRequest, string, 2 | 3]>([
     ["one series", { series: "2885.98 5667.98", sigma: 0.1, share: "wexe" }, "share-one-series", 2],
     ["a constant there is not", { input: file(two), share: "wx" }, "unknown-constant", 2],
-    ["no constant", { input: file(two), share: "wexe and we" }, "share", 2],
+    ["no constant", { input: file(two), share: "±0.5" }, "share", 2],
+    ["a word that is no constant", { input: file(two), share: "wexe and we" }, "unknown-constant", 2],
+    ["a constant twice", { input: file(two), share: "wexe wexe" }, "share", 2],
+    ["a spread of nothing", { input: file(two), share: "wexe±0" }, "share", 2],
+    ["a number of terms left to the bands", { input: file(two), share: "wexe", terms: "auto" }, "share-not-with", 2],
+    ["robust weights", { input: file(two), share: "wexe", robust: "tukey" }, "share-not-with", 2],
+    ["shifts of groups", { input: file(two), share: "wexe", groups: "fitted" }, "share-not-with", 2],
+    [
+      "a model that is not linear in its constants",
+      { input: file(two), share: "d", model: "near-limit", power: 5 },
+      "share-not-possible",
+      2,
+    ],
     ["one that is fixed", { input: file(two), share: "wexe", fix: "wexe=80" }, "share-and-fix", 2],
     ["bands without σ", { input: file(two.replaceAll(",0.1", ",")), share: "wexe" }, "share-without-sigma", 2],
     [

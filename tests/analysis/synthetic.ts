@@ -23,7 +23,7 @@ export const defaults: AnalysisOptions = {
   groups: "carried",
   modes: [],
   window: 50,
-  shared: null,
+  sharing: null,
   diatomic: false,
   acceptedEnthalpy: null,
   coverage: null,

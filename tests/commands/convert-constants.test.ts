@@ -26,20 +26,21 @@ describe("forms of constants", () => {
         fc.array(number(-1, 1), { minLength: 36, maxLength: 36 }),
         (all, terms, form, random) => {
           const values = all.slice(0, terms);
-          // any A·Aᵀ is a covariance
-          const a = values.map((_, i) => values.map((__, j) => random[6 * i + j]! * (1 + i)));
+          // any A·Aᵀ is a covariance; the diagonal keeps every uncertainty of one size
+          const a = values.map((_, i) => values.map((__, j) => random[6 * i + j]! + (i === j ? 2 : 0)));
           const covariance = a.map((row) => a.map((other) => row.reduce((sum, x, k) => sum + x * other[k]!, 0)));
           const there = changeForm(values, covariance, forms[0]!, form);
           const back = changeForm(there.values, there.covariance, form, forms[0]!);
-          const size = Math.max(...values.map(Math.abs));
-          const spread = Math.max(...covariance.flat().map(Math.abs));
           back.values.forEach((value, k) => {
-            // the bound of the issue, of the largest constant
-            expect(Math.abs(value - values[k]!)).toBeLessThan(1e-12 * size);
+            // the bound of the issue, relative; a constant is mixed with those of higher powers only, and rounds with them
+            const size = values.slice(k).reduce((sum, x) => sum + Math.abs(x), 0);
+            expect(Math.abs(value - values[k]!)).toBeLessThanOrEqual(1e-12 * size);
           });
           back.covariance!.forEach((row, i) =>
             row.forEach((c, j) => {
-              expect(Math.abs(c - covariance[i]![j]!)).toBeLessThan(1e-12 * Math.max(1, spread) * 50);
+              // the same bound, relative to the two uncertainties: an element itself may be next to nothing
+              const size = Math.sqrt(covariance[i]![i]! * covariance[j]![j]!);
+              expect(Math.abs(c - covariance[i]![j]!)).toBeLessThanOrEqual(1e-12 * size);
             }),
           );
         },
@@ -129,5 +130,25 @@ describe("forms of constants", () => {
     }
     expect(error).toBeInstanceOf(InputError);
     expect((error as InputError).faults[0]!.code).toBe(code);
+  });
+});
+
+describe("constants to predict from", () => {
+  it.each([
+    ["a constant twice", { constants: "we=2990 we=2991 wexe=52" }, "constants"],
+    ["a correlation of bands", { series: "2885.98 5667.98 8346.78", correlation: 0.9 }, "correlation-alone"],
+    [
+      "a correlation without uncertainties",
+      { constants: "we=2990 wexe=52", correlation: 0.9 },
+      "correlation-without-uncertainty",
+    ],
+  ])("are refused with %s", async (_, request, code) => {
+    const error = await predict(request).catch((wrong: unknown) => wrong);
+    expect((error as InputError).faults[0]!.code).toBe(code);
+  });
+
+  it("a correlation is refused where a result.json carries its own", () => {
+    const stored = { text: "{}", source: "result.json" };
+    expect(() => convertConstants({ stored, correlation: 0.5, to: "local" })).toThrow(InputError);
   });
 });

@@ -13,7 +13,7 @@ export function dissociationRows(solution: Solution, well: Well, top: number, y0
   const rows = [morseRow("morse", well, fit.values, by, y00, headlineNote(series.bond))];
   const least = model.terms?.least ?? fit.values.length;
   if (fit.values.length > least) {
-    const two = trySolve(series, model, { ...options, terms: least, fixed: {} });
+    const two = trySolve(series, model, { ...options, terms: least, fixed: {}, sharing: null });
     if (two !== null) {
       const { values } = two.fit;
       rows.push(morseRow("morse-refit", model.well!(values), values, two.by, y00, CAUTIONS.refit));

@@ -41,6 +41,13 @@ export const convertJob: Job = async ({ argument, options }, console) => {
       "there is nothing to convert",
       "give positions, --constants, or a result.json",
     );
+  if (options.correlation !== undefined)
+    throw fault(
+      "--correlation",
+      "correlation-alone",
+      "positions have no correlation here",
+      "leave it out, or give --constants",
+    );
   const given = Object.entries({
     to: textOption(options.to),
     unit: textOption(options.unit),
