@@ -33,7 +33,12 @@ export function followManifold(
   return {
     ...manifoldAt(manifold, p, by, options.upTo ?? top + BEYOND, labels),
     dissociation: dissociationOf(manifold, p, by),
-    warnings: [...manifold.warnings(labels, p), ...nearZero(solution), ...atFaceValue(solution, excess.applied)],
+    warnings: [
+      ...manifold.warnings(labels, p),
+      ...nearZero(solution),
+      ...twiceMixed(solution),
+      ...atFaceValue(solution, excess.applied),
+    ],
   };
 }
 
@@ -107,6 +112,19 @@ function nearZero({ model, options, fit, by }: Solution): Warning[] {
       },
     ];
   });
+}
+
+/** A model whose states mix may hold the very mixing that the companion was corrected for. */
+function twiceMixed({ used, model }: Solution): Warning[] {
+  const corrected = used.flatMap(({ label, twoLevels }) => (twoLevels === null ? [] : [label]));
+  if (corrected.length === 0) return [];
+  return [
+    {
+      code: "companion-in-mixed-model",
+      message: `${corrected.join(", ")} ${corrected.length === 1 ? "is" : "are"} corrected for a companion, and the model ${model.name} mixes states itself: if the companion is one of its levels, the shift counts twice; give both as measured levels then`,
+      about: corrected[0]!,
+    },
+  ];
 }
 
 function atFaceValue({ used, sigmaKnown, options }: Solution, applied: boolean): Warning[] {

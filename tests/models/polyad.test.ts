@@ -218,3 +218,17 @@ describe("requests", () => {
     expect(hot.code).toBe("hot");
   });
 });
+
+describe("a companion beside a polyad", () => {
+  it("is warned of: the model may hold the same mixing", async () => {
+    const text = [
+      "band,position,sigma,companion,ratio",
+      "1_1,3037.7,0.5,2950,9",
+      ...["1_2,2704.3", "2_1,5959.5", "2_2,5710.0", "2_3,5340.5", "3_1,8785.4", "3_2,8591.6"].map(
+        (row) => `${row},0.5,,`,
+      ),
+    ].join("\n");
+    const { series } = await fit({ input: { text, source: "p.csv", format: "csv" }, model: "polyad", fix: "gbb=5" });
+    expect(series[0]!.warnings.map(({ code }) => code)).toContain("companion-in-mixed-model");
+  });
+});
