@@ -25,7 +25,7 @@ export interface AssignRequest {
   /** @default "vacuum" */
   readonly medium?: string;
   readonly air?: string;
-  /** standard uncertainty of peaks that carry none, what a two-constant ladder leaves included; @default 2 cm-1 */
+  /** standard uncertainty of peaks that carry none, what a two-constant ladder leaves included; @default 3 cm-1 */
   readonly sigma?: string | number;
   readonly sigmaMeans?: string;
   readonly laser?: string | number;
@@ -52,8 +52,8 @@ export interface AssignDocument extends Assignment {
   readonly warnings: readonly Warning[];
 }
 
-/** σ in cm-1 where none is stated: of positions read off a spectrum. */
-const UNSTATED_SIGMA = 2;
+/** σ in cm-1 where none is stated: of positions read off a spectrum, and what three constants leave of HDO to v = 7. */
+const UNSTATED_SIGMA = 3;
 /** Real ladders bend by ωy/ω of this size: HDO 1.2e-4, HCl 0.7e-4, CO 1e-6 (from the constants of those molecules). */
 const CUBIC = 1e-4;
 const MOST_PEAKS = 200;

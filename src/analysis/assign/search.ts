@@ -170,7 +170,7 @@ function rises({ peaks }: Scene, members: readonly Member[]): boolean {
 }
 
 /**
- * The evidence of these labels over that of strangers only: ln of ∫ prior(ω, ωx)·prior(ωy)·Π N(peak; level, σ) over the constants, for each member the
+ * The evidence of these labels over that of strangers only: ln of 1/(number of ways to give so many levels to the peaks)·∫ prior(ω, ωx)·prior(ωy)·Π N(peak; level, σ) over the constants, for each member the
  * density of a stranger taken back, and for each level inside the spectrum the chance that it is seen or is not. null where it breaks a limit.
  */
 function scored(scene: Scene, members: readonly Member[], ladder: Ladder): Candidate | null {
@@ -192,12 +192,20 @@ function scored(scene: Scene, members: readonly Member[], ladder: Ladder): Candi
   const levels = new Array<number>(peaks.length).fill(0);
   for (const { i, v } of members) levels[i] = v;
   const score =
+    -logChoices(peaks.length, members.length) +
     scene.logPrior +
     ladder.logIntegral -
     members.length * scene.logStranger +
     members.length * Math.log(SEEN) +
     missing * Math.log(1 - SEEN);
   return { levels, ladder, score };
+}
+
+/** ln of the number of ways to give m levels to n peaks: among many strangers some fall into step by chance. */
+function logChoices(n: number, m: number): number {
+  let sum = 0;
+  for (let i = 0; i < m; i++) sum += Math.log(n - i);
+  return sum;
 }
 
 /** Single changes: another free peak near a level, or one member less. */
