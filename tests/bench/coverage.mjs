@@ -8,7 +8,7 @@ import { build } from "esbuild";
 const count = Number(process.argv[2] ?? 2000);
 const source = `
 export { analysed, position, synthetic } from "./tests/analysis/synthetic.ts";
-export { normal, seeded } from "./tests/fitting/random.ts";`;
+export { generator } from "./tests/analysis/ladders.ts";`;
 const out = resolve("node_modules/.rungwise/coverage.mjs");
 mkdirSync(resolve("node_modules/.rungwise"), { recursive: true });
 await build({
@@ -21,7 +21,7 @@ await build({
     js: 'import{createRequire as bundledRequire}from"node:module";const require=bundledRequire(import.meta.url);',
   },
 });
-const { analysed, position, synthetic, normal, seeded } = await import(pathToFileURL(out).href);
+const { analysed, position, synthetic, generator } = await import(pathToFileURL(out).href);
 
 const truth = { we: 3870, wexe: 83, weye: 0 };
 const levels = [1, 2, 3, 4, 5];
@@ -29,7 +29,7 @@ const d0 = truth.we ** 2 / (4 * truth.wexe) - truth.we / 2 + truth.wexe / 4;
 const percent = (n, of = count) => `${((100 * n) / of).toFixed(1).padStart(5)} %`;
 
 function coverage(what, stated, options) {
-  const next = normal(seeded(4));
+  const next = generator(4).normal;
   const held = [0, 0, 0, 0];
   for (let trial = 0; trial < count; trial++) {
     const errors = levels.map(() => next());
@@ -52,7 +52,7 @@ for (const excess of ["none", "scatter", "birge"])
   coverage(`linear, sigma stated half, excess ${excess}`, 0.5, { excess });
 
 function share(what, make, right) {
-  const next = normal(seeded(9));
+  const next = generator(9).normal;
   let hits = 0;
   for (let trial = 0; trial < count; trial++) {
     const { truth: t = truth, errors } = make(next, trial);
