@@ -24,17 +24,9 @@ export function withMixture(
   model: Model,
   options: AnalysisOptions,
 ): { readonly series: Series; readonly warnings: readonly Warning[] } {
-  const members = series.bond?.atoms == null || model.well === undefined ? [] : membersOf(series.bond.atoms);
-  if (members.length < 2) return { series, warnings: [] };
-  const p = provisional(series, model, options);
-  if (p === null) return { series, warnings: [] };
-  const reference = series.bond!.reducedMass;
-  const wells = members.map((member) => ({ member, well: model.well!(scaled(p, member.reducedMass, reference)) }));
-  const [commonest] = [...wells].sort((a, b) => b.member.share - a.member.share);
-  const parts = series.bands.map(({ label }) => {
-    const centre = wells.reduce((sum, { member, well }) => sum + member.share * position(well, model, label), 0);
-    return position(commonest!.well, model, label) - centre;
-  });
+  const pull = pullOf(series, model, options);
+  if (pull === null) return { series, warnings: [] };
+  const parts = series.bands.map(({ label }) => pull.on(label));
   const sizes = parts.map(Math.abs);
   const element = series.bond!.atoms!.filter(isNatural).join(" and ");
   const mixture: Shared = { kind: "mixture", group: null, sigma: { value: 1, unit: "1" }, parts };
@@ -44,9 +36,31 @@ export function withMixture(
     warnings: [
       {
         code: "natural-mixture",
-        message: `${element} without a mass number is the natural mixture: its mean mass is used, and the other isotopes pull the centre of a band from that of ${commonest!.member.name} by ${Math.min(...sizes).toFixed(2)} to ${Math.max(...sizes).toFixed(2)} cm-1; ${known ? "that is carried as a correlated uncertainty" : "without σ that is not in the uncertainties"}; name the isotope if the bands are those of one`,
+        message: `${element} without a mass number is the natural mixture: its mean mass is used, and the other isotopes pull the centre of a band from that of ${pull.from} by ${Math.min(...sizes).toFixed(2)} to ${Math.max(...sizes).toFixed(2)} cm-1; ${known ? "that is carried as a correlated uncertainty" : "without σ that is not in the uncertainties"}; name the isotope if the bands are those of one`,
       },
     ],
+  };
+}
+
+/** How far the centre of a band of the mixture lies below that of its commonest isotopologue, cm-1; null where there is no mixture, or no fit to scale. */
+export function pullOf(
+  series: Series,
+  model: Model,
+  options: AnalysisOptions,
+): { readonly from: string; readonly on: (label: string) => number } | null {
+  const members = series.bond?.atoms == null || model.well === undefined ? [] : membersOf(series.bond.atoms);
+  if (members.length < 2) return null;
+  const p = provisional(series, model, options);
+  if (p === null) return null;
+  const reference = series.bond!.reducedMass;
+  const wells = members.map((member) => ({ member, well: model.well!(scaled(p, member.reducedMass, reference)) }));
+  const [commonest] = [...wells].sort((a, b) => b.member.share - a.member.share);
+  return {
+    from: commonest!.member.name,
+    on(label) {
+      const centre = wells.reduce((sum, { member, well }) => sum + member.share * position(well, model, label), 0);
+      return position(commonest!.well, model, label) - centre;
+    },
   };
 }
 
@@ -82,12 +96,14 @@ function provisional(series: Series, model: Model, options: AnalysisOptions): nu
   const distinct = new Set(used.map(({ label }) => label)).size;
   const terms = model.terms === null ? null : Math.max(model.terms.least, Math.min(MOST_TERMS, distinct));
   const least = { ...options, terms, fixed: {} };
+  // Also of a series that carries the pull already.
+  const measured = { ...series, shared: series.shared.filter(({ kind }) => kind !== "mixture") };
   try {
     const prepared = model.prepare(used, least);
     const problem = {
       ...prepared,
       observed: used.map((band) => band.position),
-      errors: errorModel(series, used, model),
+      errors: errorModel(measured, used, model),
     };
     return prepared.linear ? fitValues(problem, UNTREATED) : null;
   } catch {

@@ -1,4 +1,5 @@
 export * from "./label.ts";
+export { type Light, lightOf, offsetEffect, readLight } from "./light.ts";
 export type { RawRow } from "./raw.ts";
 export { rowsFromBands, rowsFromSeries } from "./read-flags.ts";
 export { formatOf, type InputFormat, readInput } from "./read-input.ts";

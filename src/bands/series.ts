@@ -1,5 +1,6 @@
 import type { Place, Warning } from "../messages/index.ts";
 import type { Bond } from "../species/index.ts";
+import type { Light } from "./light.ts";
 import type { TwoLevels } from "./two-levels.ts";
 
 export type Medium = "vacuum" | "air";
@@ -51,5 +52,6 @@ export interface Series {
   readonly shared: readonly Shared[];
   /** true: spacings (v+1 - v) were subtracted from measured positions, so neighbours share errors. */
   readonly subtracted: boolean;
+  readonly light: Light;
   readonly warnings: readonly Warning[];
 }

@@ -1,19 +1,19 @@
 import { nearest } from "../messages/index.ts";
 import type { UnitName } from "../quantity/index.ts";
 import type { Context } from "./context.ts";
-import { rate, type Wrong } from "./conversion.ts";
+import type { Wrong } from "./conversion.ts";
 import { readVibrationalLabel } from "./label.ts";
+import { offsetEffect } from "./light.ts";
 import type { ReadBand } from "./read-band.ts";
 import type { Shared } from "./series.ts";
 
 /**
- * Every cause of error that the bands of one series have in common, with its effect on each band in cm-1. A wavelength offset acts with the
- * sign of dν̃/dλ; with an exciting line the position is a difference to it, and the sign turns.
+ * Every cause of error that the bands of one series have in common, with its effect on each band in cm-1.
  */
 export function sharedParts(read: readonly ReadBand[], context: Context): Shared[] {
   const { shared, groups, perQuantum, laser } = context;
-  const offset = (unit: UnitName, value: number) => (band: ReadBand) =>
-    (laser === null ? 1 : -1) * value * rate(band.absolute, unit, { unit, medium: context.medium, air: context.air });
+  const light = { medium: context.medium, air: context.air, exciting: laser?.wavenumber ?? null };
+  const offset = (unit: UnitName, value: number) => (band: ReadBand) => offsetEffect(value, unit, band.absolute, light);
   const parts: Shared[] = [];
   if (shared !== null)
     parts.push({ kind: "calibration", group: null, sigma: shared, parts: read.map(offset(shared.unit, shared.value)) });

@@ -71,6 +71,7 @@ function oneSeries(
     bands,
     shared: sharedParts(read, context),
     subtracted: context.subtracted,
+    light: { medium: context.medium, air: context.air, exciting: context.laser?.wavenumber ?? null },
     warnings: [
       ...warnings,
       ...aboutSigma(used),

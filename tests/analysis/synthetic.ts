@@ -66,7 +66,15 @@ export function synthetic(
       asRead: { text: "", unit: "cm-1", medium: "vacuum", sigmaText: null },
     }),
   );
-  return { name: "synthetic", bond: null, bands, shared: [], subtracted: false, warnings: [] };
+  return {
+    name: "synthetic",
+    bond: null,
+    bands,
+    shared: [],
+    subtracted: false,
+    light: { medium: "vacuum", air: standardAir, exciting: null },
+    warnings: [],
+  };
 }
 
 /** Fit a synthetic series. */
