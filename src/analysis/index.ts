@@ -1,5 +1,6 @@
 export { analyse } from "./analyse.ts";
 export { type Assignment, assignPeaks } from "./assign/assign.ts";
+export { boundLevel } from "./bound-level.ts";
 export { compareAll, type GivenConstants } from "./compare.ts";
 export type * from "./document.ts";
 export { manifoldAt } from "./follow-manifold.ts";
@@ -7,9 +8,9 @@ export { changeForm, type Form, forms } from "./forms/forms.ts";
 export type * from "./mixed-result.ts";
 export { labelsWithin } from "./near-limit/levels.ts";
 export type { AnalysisOptions, ExcessKind, IntervalKind, SharedConstant } from "./options.ts";
-export { type Aim, type Plan, type PlanOptions, planKnown, planNext } from "./plan/plan.ts";
+export { planKnown, planNext } from "./plan/plan.ts";
+export type { Aim, Plan, PlannedBand, PlanOptions } from "./plan/types.ts";
 export { predict } from "./predictions.ts";
 export type { Propagation } from "./propagation.ts";
 export type * from "./result.ts";
 export { shareConstants } from "./share/share.ts";
-export { turningPoint } from "./turning-point.ts";

@@ -6,6 +6,8 @@ export interface Flag {
   /** placeholder of the value, or null for a switch */
   readonly value: string | null;
   readonly help: string;
+  /** may stand there several times; the values are joined by commas */
+  readonly repeats?: true;
 }
 
 /** How bands come in. */
@@ -214,7 +216,8 @@ export const planFlags: readonly Flag[] = [
   {
     name: "window",
     value: '"600..900 nm"',
-    help: "where lasers and detectors reach, vacuum; several by commas (default everywhere)",
+    help: "where lasers and detectors reach, vacuum; several by commas or repeated (default everywhere)",
+    repeats: true,
   },
   { name: "hot", value: "V", help: "also bands that start from levels up to V (default 0)" },
 ];

@@ -65,9 +65,12 @@ function describe(command: Command, entry: Entry): void {
   command.helpOption("-h, --help", "show help");
   for (const { title, flags } of entry.groups) {
     command.optionsGroup(title);
-    for (const { name, short, value, help } of flags) {
+    for (const { name, short, value, help, repeats } of flags) {
       const words = `${short === undefined ? "" : `-${short}, `}--${name}${value === null ? "" : ` <${value}>`}`;
-      command.addOption(new Option(words, help));
+      const option = new Option(words, help);
+      if (repeats === true)
+        option.argParser<string>((next, before) => (before === undefined ? next : `${before}, ${next}`));
+      command.addOption(option);
     }
   }
   const file = entry.argument === "[FILE]" ? "\nFILE is .csv, .tsv or .toml; - reads standard input.\n" : "";

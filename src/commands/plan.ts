@@ -20,7 +20,7 @@ export interface PlanRequest extends Omit<SourceRequest, "window" | "modes"> {
 }
 
 /** The document of `plan`; `aim`, `now` and `candidates` are those of the first series. */
-export interface PlanDocument extends Omit<Plan, "name"> {
+export interface PlanDocument extends Pick<Plan, "aim" | "now" | "candidates"> {
   readonly schemaVersion: 1;
   readonly tool: { readonly name: string; readonly version: string };
   readonly series: readonly Plan[];
@@ -41,8 +41,8 @@ export async function plan(request: PlanRequest): Promise<PlanDocument> {
     rest.constants !== undefined || rest.stored !== undefined
       ? await fromKnown(rest, options)
       : await fromBands(rest, options);
-  const { name: _, ...first } = plans[0]!;
-  return { schemaVersion: 1, tool, ...first, series: plans, warnings: warnings(plans, own) };
+  const { aim: text, now, candidates } = plans[0]!;
+  return { schemaVersion: 1, tool, aim: text, now, candidates, series: plans, warnings: warnings(plans, own) };
 }
 
 async function fromBands(request: FitRequest, options: Omit<PlanOptions, "upTo">): Promise<Plan[]> {
@@ -62,21 +62,21 @@ async function fromBands(request: FitRequest, options: Omit<PlanOptions, "upTo">
 
 /** From constants or a stored result: what they know, and nothing of the bands behind them. */
 async function fromKnown(request: SourceRequest, options: Omit<PlanOptions, "upTo">): Promise<Plan[]> {
-  const { sources, options: read } = await sourcesOf(request);
-  return sources.map(({ name, values, by, used, lastBandOut, reducedMass }) => {
+  const { sources, options: read, light } = await sourcesOf(request);
+  return sources.map(({ reducedMass, values, warnings, ...known }) => {
     const told = { ...read.analysis, terms: values.length, fixed: {}, reducedMass };
     const keys = read.model.prepare([], told).parameters.map(({ key }) => key);
     return planKnown(
       {
-        name,
+        ...known,
         place: request.stored?.source ?? "--constants",
         model: read.model,
         options: told,
+        light,
         keys,
         values,
-        by,
-        used: used.map(({ label }) => label),
-        lastBandOut,
+        // What a stored fit says of itself stands in its report.
+        warnings: request.stored === undefined ? warnings : [],
       },
       { ...options, upTo: read.analysis.upTo },
     );
@@ -109,7 +109,7 @@ function readPlan(own: ReadonlyMap<string, Setting>, faults: Fault[]): Omit<Plan
       fault("sigma-new", "sigma-new", what, "write it as in --sigma-new 0.02, or 0.01 nm"),
     ),
     hot: Number(hot),
-    windows: windowsFrom(own.get("window")?.value ?? "", (what) =>
+    windows: windowsFrom(own.get("window")?.value, (what) =>
       fault("window", "window", what, 'write it as in --window "600..900 nm" or "9000..11000"'),
     ),
   };
@@ -140,20 +140,22 @@ function sigmaFrom(text: string | undefined, fault: (what: string) => null): Pla
 }
 
 /** `600..900 nm, 9000..11000`: each range in its own unit, cm-1 where none stands. */
-function windowsFrom(text: string, fault: (what: string) => null): PlanOptions["windows"] {
+function windowsFrom(text: string | undefined, fault: (what: string) => null): PlanOptions["windows"] {
+  if (text === undefined) return [];
+  if (text.trim() === "") return fault("no window is given") ?? [];
   return text
     .split(/[,;\n]+/)
     .filter((part) => part.trim() !== "")
     .flatMap((part) => {
-      const [from = "", to = "", ...more] = part.trim().split("..");
-      const { number, unit } = splitUnit(to);
-      const ends = [from, number].map((end) => readMeasurement(end));
-      if (more.length > 0 || !ends.every((end) => end.ok && end.value > 0))
+      const [from, to, ...more] = part.split("..").map((end) => splitUnit(end));
+      const ends = [from, to].map((end) => readMeasurement(end?.number ?? ""));
+      const unit = to?.unit ?? "cm-1";
+      if (more.length > 0 || !ends.every((end) => end.ok && end.value > 0) || (from!.unit ?? unit) !== unit)
         return fault(`"${part.trim()}" is no window`) ?? [];
-      const own = unit ?? "cm-1";
-      const [a, b] = ends.map((end) => toWavenumber(end.ok ? end.value : 1, own)) as [number, number];
+      const [a, b] = ends.map((end) => toWavenumber(end.ok ? end.value : 1, unit)) as [number, number];
       if (a === b) return fault(`"${part.trim()}" is empty`) ?? [];
-      const name = `${from.trim()} to ${number} ${isWavelength(own) ? `${own} (vacuum)` : own}`;
-      return [{ low: Math.min(a, b), high: Math.max(a, b), text: name }];
+      const ofLight = isWavelength(unit);
+      const name = `${from!.number} to ${to!.number} ${ofLight ? `${unit} (vacuum)` : unit}`;
+      return [{ low: Math.min(a, b), high: Math.max(a, b), ofLight, text: name }];
     });
 }

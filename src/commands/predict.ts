@@ -1,13 +1,13 @@
 import {
+  boundLevel,
   type LevelResult,
   labelsWithin,
   manifoldAt,
   type Prediction,
   predict as predictBands,
-  turningPoint,
 } from "../analysis/index.ts";
 import { InputError, type Warning } from "../messages/index.ts";
-import type { Manifold, Model } from "../models/index.ts";
+import type { Manifold } from "../models/index.ts";
 import { readBond } from "../species/index.ts";
 import { type Source, type SourceRequest, sourcesOf } from "./prediction-sources.ts";
 import type { ReadOptions } from "./read-options.ts";
@@ -148,10 +148,4 @@ function otherBond(
       },
     ],
   };
-}
-
-function boundLevel(model: Model, values: readonly number[]): number | null {
-  const limit =
-    model.well === undefined ? (values[model.limit?.level ?? -1] ?? null) : turningPoint(model.well(values), 0);
-  return limit === null ? null : Math.max(0, Math.ceil(limit - 1e-9) - 1);
 }

@@ -1,4 +1,5 @@
 import type { FitDocument, Propagation, SeriesResult } from "../analysis/index.ts";
+import { type Light, readLight } from "../bands/index.ts";
 import { type Fault, InputError, type Warning } from "../messages/index.ts";
 import { readMeasurement } from "../quantity/index.ts";
 import { readBond } from "../species/index.ts";
@@ -31,7 +32,12 @@ export interface Source {
   readonly warnings: readonly Warning[];
 }
 
-type Prepared = { readonly sources: readonly Source[]; readonly options: ReadOptions };
+interface Prepared {
+  readonly sources: readonly Source[];
+  readonly options: ReadOptions;
+  /** that bands are, or were, seen in */
+  readonly light: Light;
+}
 
 /** Constants from one of the three. @throws InputError as `predict` */
 export async function sourcesOf({ constants, correlation, stored, ...rest }: SourceRequest): Promise<Prepared> {
@@ -60,7 +66,11 @@ export async function sourcesOf({ constants, correlation, stored, ...rest }: Sou
 
 async function fromBands(request: FitRequest): Promise<Prepared> {
   const gathered = await gather(request);
-  return { sources: [...fitEach(gathered)].map(sourceOf), options: gathered.options };
+  return {
+    sources: [...fitEach(gathered)].map(sourceOf),
+    options: gathered.options,
+    light: readLight(gathered.settings),
+  };
 }
 
 /** What a result knows, as a source of predictions. */
@@ -95,15 +105,17 @@ async function fromStored(stored: { text: string; source: string }, request: Fit
   if (document?.schemaVersion !== 1 || !Array.isArray(series) || series.length === 0 || !series.every(isResult))
     throw fault("holds no result of fit", "name the result.json of a report, or the output of rungwise fit --json");
   // What the model was told of itself belongs to its constants.
-  const told = Object.fromEntries(
-    ["power", "bonds", "cross", "bend"].flatMap((name) => {
-      const value = document.request?.[name];
-      return value === undefined ? [] : [[name, value] as const];
-    }),
-  );
-  const settings = requestSettings({ ...told, ...request, model: series[0]!.model });
-  const options = checked(await readOptions(settings));
-  return { sources: series.map(sourceOf), options };
+  const told = (names: readonly string[]) =>
+    Object.fromEntries(
+      names.flatMap((name) => {
+        const value = document.request?.[name];
+        return value === undefined ? [] : [[name, value] as const];
+      }),
+    );
+  const ofModel = told(["power", "bonds", "cross", "bend"]);
+  const options = checked(await readOptions(requestSettings({ ...ofModel, ...request, model: series[0]!.model })));
+  const light = readLight(requestSettings({ ...told(["laser", "medium", "air"]), ...request }));
+  return { sources: series.map(sourceOf), options, light };
 }
 
 function isResult(x: unknown): x is SeriesResult {
@@ -209,6 +221,7 @@ async function fromConstants(
       },
     ],
     options,
+    light: readLight(requestSettings(request)),
   };
 }
 

@@ -133,6 +133,29 @@ describe("plans", () => {
     expect(typed.candidates[0]!.gain).toBeGreaterThan(1);
   });
 
+  it("say that constants without correlation are rough, where bands end, and that σ below the scatter does not count", async () => {
+    const codes = async (request: PlanRequest) => {
+      const { series } = await plan({ aim: "we", sigmaNew: 0.001, ...request });
+      return series[0]!.warnings.map(({ code }) => code);
+    };
+    expect(await codes({ constants: "we=2990(1) wexe=52(1)" })).toEqual(["constants-uncorrelated"]);
+    expect(await codes({ ...base, bands: hcl.join(", "), upTo: 60 })).toEqual(["above-highest-level"]);
+    const unstated: PlanRequest = { series: "2885.98 5667.98 8346.78 10922.8", terms: 2 };
+    expect(await codes(unstated)).toEqual(["sigma-new-not-reached"]);
+    const { candidates } = await plan({ ...unstated, aim: "we", sigmaNew: 0.001 });
+    const { quality } = (await fit(unstated)).series[0]!;
+    // residuals of 0.3 are differences of numbers of 1e4: eleven digits are left
+    for (const { sigmaNew } of candidates)
+      expect(Math.abs(sigmaNew / quality.standardDeviation! - 1)).toBeLessThan(1e-10);
+  });
+
+  it("take the median of the stated σ where none is given for the new band", async () => {
+    const sigmaOf = async (bands: string) => (await plan({ bands, terms: 2, aim: "we" })).candidates[0]!.sigmaNew;
+    // mean of the two in the middle, to rounding
+    expect(await sigmaOf("1-0 2885.98±0.02, 2-0 5667.98±0.04")).toBeCloseTo(0.03, 12);
+    expect(await sigmaOf("1-0 2885.98±0.02, 2-0 5667.98±0.04, 3-0 8346.78±0.5")).toBe(0.04);
+  });
+
   it("say how far to look on both sides, and which σ was assumed", async () => {
     const document = await plan({ series: "2885.98 5667.98 8346.78 10922.8", sigma: 0.05, terms: 2, aim: "wexe" });
     expect(document.candidates[0]!.lastBandOut).toBeGreaterThan(0);
@@ -144,6 +167,12 @@ describe("plans", () => {
     ["an aim that is none", { aim: "prediction:0-3" }, "aim", 2],
     ["a constant the model does not have", { aim: "weye" }, "aim", 2],
     ["a constant that is held", { aim: "wexe", fix: "wexe=52" }, "aim", 2],
+    ["D0 of spacings that do not shrink", { aim: "d0", bands: "1-0 2885.98(2), 2-0 5800(1)", terms: 2 }, "aim", 2],
+    ["a prediction above the highest bound level", { aim: "prediction:60-0" }, "aim", 2],
+    ["a prediction that is no label", { aim: "prediction:seven" }, "aim", 2],
+    ["an empty window", { aim: "we", window: " " }, "window", 2],
+    ["a window in two units", { aim: "we", window: "600 nm..1 um" }, "window", 2],
+    ["a window of no width", { aim: "we", window: "600..600 nm" }, "window", 2],
     ["a window without any band", { aim: "we", window: "200..210 nm" }, "no-candidates", 2],
     ["a window that is none", { aim: "we", window: "600-900 nm" }, "window", 2],
     ["a σ that is none", { aim: "we", sigmaNew: "small" }, "sigma-new", 2],

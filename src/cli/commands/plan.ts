@@ -21,6 +21,6 @@ export const planJob: Job = async (asked, console) => {
     const { renderJson } = await import("../../reporting/json.ts");
     console.out(renderJson(document));
   } else console.out(renderPlan(document, { colour: console.colourOut }));
-  tell({ warnings: document.warnings }, console);
+  tell(document, console);
   return EXIT.done;
 };

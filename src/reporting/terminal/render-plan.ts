@@ -1,4 +1,4 @@
-import type { Plan } from "../../analysis/index.ts";
+import type { Plan, PlannedBand } from "../../analysis/index.ts";
 import type { TableData } from "../table-data.ts";
 import { LASER_LINE } from "../tables/index.ts";
 import { fixed, measured, quantity, size } from "../text/cells.ts";
@@ -17,10 +17,11 @@ export function renderPlan(
 
 function aimText({ aim, now }: Plan): string {
   const value = `${quantity(now)} ${unitSymbol(now.unit)}`;
-  return aim === "model" ? `telling the models apart, next constant ${value} now` : `${aim} = ${value} now`;
+  if (aim === "model") return `telling the models apart, next constant ${value} now`;
+  return `${aim === "d0" ? "D0" : aim} = ${value} now`;
 }
 
-function planTable({ candidates, aim, now }: Plan): TableData {
+function planTable({ candidates, aim, now, scattered }: Plan): TableData {
   const apart = aim === "model";
   const margin = candidates[0]?.lastBandOut ?? null;
   return {
@@ -29,7 +30,7 @@ function planTable({ candidates, aim, now }: Plan): TableData {
       { quantity: "look at", unit: "cm-1", align: "point" },
       { quantity: "λ vacuum", unit: "nm", align: "point" },
       { quantity: "σ new", unit: "cm-1", align: "point" },
-      ...(apart ? [{ quantity: "models apart / u", align: "point" } as const] : []),
+      ...(apart ? [{ quantity: "apart / u", align: "point" } as const] : []),
       { quantity: "u after", unit: now.unit, align: "point" },
       { quantity: "gain", align: "point" },
     ],
@@ -37,12 +38,7 @@ function planTable({ candidates, aim, now }: Plan): TableData {
       cells: [
         band.observed ? `${band.label} again` : band.label,
         quantity(band.position),
-        measured(
-          band.vacuumWavelength,
-          band.position.standardUncertainty === null
-            ? null
-            : (band.position.standardUncertainty / band.position.value) * band.vacuumWavelength,
-        ),
+        measured(band.vacuumWavelength, wavelengthUncertainty(band)),
         size(band.sigmaNew),
         ...(apart ? [fixed(band.separation, 1)] : []),
         size(band.uncertaintyAfter),
@@ -50,6 +46,12 @@ function planTable({ candidates, aim, now }: Plan): TableData {
       ],
     })),
     notes: [
+      ...(apart
+        ? [
+            "Apart: how far the band lies off the smaller model if the larger one is true, over the uncertainty of that difference.",
+          ]
+        : []),
+      ...(scattered ? ["λ: of the scattered light."] : []),
       "Gain: uncertainty now over that with this one band added; the uncertainties are those of the model being right.",
       ...(margin === null
         ? []
@@ -58,4 +60,9 @@ function planTable({ candidates, aim, now }: Plan): TableData {
           ]),
     ],
   };
+}
+
+/** |dλ/dν̃| = λ² for light of vacuum wavelength λ, which is that of a Raman shift too. */
+function wavelengthUncertainty({ vacuumWavelength, position: { standardUncertainty: u } }: PlannedBand): number | null {
+  return u === null ? null : (u * vacuumWavelength ** 2) / 1e7;
 }
