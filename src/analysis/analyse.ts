@@ -186,7 +186,7 @@ function predictionsOf(
   const wanted = options.upTo ?? top + LEVELS_BEYOND;
   const upTo = highest === null ? wanted : Math.min(wanted, highest);
   const topBand = used.findIndex((band) => model.levels(band.label).upper === top);
-  const miss = treated.leftOut[topBand] ?? null;
+  const miss = treated().leftOut[topBand] ?? null;
   const predictions = predict(
     model,
     options,

@@ -72,7 +72,7 @@ export function stepTest(fewer: Stated, more: Stated): Step | null {
 
 function rowOf(fit: Solution, step: Step | null, chosen: boolean): ComparisonRow {
   const { stated, sigmaKnown, probability, tests, used } = fit;
-  const left = tests.leftOut.filter((e) => e !== null);
+  const left = tests().leftOut.filter((e) => e !== null);
   return {
     terms: stated.values.length,
     degreesOfFreedom: stated.degreesOfFreedom,

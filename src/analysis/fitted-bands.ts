@@ -9,7 +9,7 @@ export function qualityOf(solution: Solution): Quality {
   const dof = stated.degreesOfFreedom;
   const squares = fit.residuals.reduce((sum, r) => sum + r * r, 0);
   const constants = stated.keys.length - Object.values(solution.options.fixed).filter((f) => f.sigma === null).length;
-  const errors = treated.leftOut.filter((e) => e !== null);
+  const errors = treated().leftOut.filter((e) => e !== null);
   return {
     bands: used.length,
     degreesOfFreedom: dof,
@@ -30,6 +30,8 @@ export function qualityOf(solution: Solution): Quality {
 /** Every band of the series beside its calculated position. */
 export function bandResults({ series, model, options, used, fit, tests, treated, weights }: Solution): BandResult[] {
   const { calculated } = model.prepare(series.bands, options).evaluate(fit.values);
+  const { studentized } = tests();
+  const { leverage, leftOut } = treated();
   return series.bands.map((band, i) => {
     const at = used.indexOf(band);
     const of = <T>(list: readonly T[]): T | null => (at < 0 ? null : (list[at] ?? null));
@@ -39,9 +41,9 @@ export function bandResults({ series, model, options, used, fit, tests, treated,
       calculated: calculated[i]!,
       residual: band.position - calculated[i]!,
       standardUncertainty: band.sigma,
-      studentizedResidual: of(tests.studentized),
-      leverage: of(treated.leverage),
-      leftOutResidual: of(treated.leftOut),
+      studentizedResidual: of(studentized),
+      leverage: of(leverage),
+      leftOutResidual: of(leftOut),
       used: band.use,
       weight: weights === null ? null : of(weights),
       asRead: band.asRead,

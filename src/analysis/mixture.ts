@@ -48,7 +48,9 @@ export function pullOf(
   model: Model,
   options: AnalysisOptions,
 ): { readonly from: string; readonly on: (label: string) => number } | null {
-  const members = series.bond?.atoms == null || model.well === undefined ? [] : membersOf(series.bond.atoms);
+  const atoms = series.bond?.atoms;
+  if (!atoms?.some(isNatural) || model.well === undefined) return null;
+  const members = membersOf(atoms);
   if (members.length < 2) return null;
   const p = provisional(series, model, options);
   if (p === null) return null;

@@ -34,7 +34,8 @@ export interface Solution {
   readonly sigmaKnown: boolean;
   /** the fit with the uncertainties as stated: χ² and residual tests */
   readonly stated: LinearFit;
-  readonly tests: Diagnostics;
+  /** residual tests of `stated`, made when first asked for */
+  readonly tests: () => Diagnostics;
   /** the fit after the excess treatment: constants and everything after */
   readonly fit: LinearFit;
   readonly treatment: Treatment;
@@ -45,8 +46,8 @@ export interface Solution {
   };
   /** probability of a larger χ² by chance; null without σ or degrees of freedom */
   readonly probability: number | null;
-  /** residual tests of `fit` */
-  readonly treated: Diagnostics;
+  /** residual tests of `fit`, made when first asked for */
+  readonly treated: () => Diagnostics;
   readonly by: Propagation;
   /** weights of a robust fit, one a used band; null otherwise */
   readonly weights: readonly number[] | null;
@@ -86,12 +87,8 @@ export function solve(series: Series, model: Model, options: AnalysisOptions): S
     errors,
     sigmaKnown,
     stated,
-    get tests() {
-      return tests();
-    },
-    get treated() {
-      return treated();
-    },
+    tests,
+    treated,
     fit: excess.fit,
     treatment: excess.treatment,
     excess: { kind: excess.kind, value: excess.value, applied: excess.applied },

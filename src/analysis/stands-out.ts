@@ -20,11 +20,12 @@ const BAND_MARGIN = 5;
 /** The band that stands out most, or null. With one degree of freedom all bands look alike, and none is named. */
 export function standsOut({ used, tests, stated, sigmaKnown }: Solution): Outlier | null {
   if (stated.degreesOfFreedom < 2 || (!sigmaKnown && stated.exact)) return null;
+  const { studentized } = tests();
   let worst = -1;
-  tests.studentized.forEach((t, i) => {
-    if (t !== null && Math.abs(t) > Math.abs(tests.studentized[worst] ?? 0)) worst = i;
+  studentized.forEach((t, i) => {
+    if (t !== null && Math.abs(t) > Math.abs(studentized[worst] ?? 0)) worst = i;
   });
-  const t = tests.studentized[worst];
+  const t = studentized[worst];
   if (t == null) return null;
   const dof = sigmaKnown ? null : stated.degreesOfFreedom - 1;
   if (2 * studentUpperTail(Math.abs(t), dof) * used.length > LEVEL) return null;

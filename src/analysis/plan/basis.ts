@@ -31,7 +31,7 @@ export interface Basis {
 export function basisOf(solution: Solution, warnings: readonly Warning[]): Basis {
   const { series, model, options, fit, by, used, treated, sigmaKnown } = solution;
   const top = Math.max(...used.map(({ label }) => model.levels(label).upper));
-  const miss = treated.leftOut[used.findIndex(({ label }) => model.levels(label).upper === top)] ?? null;
+  const miss = treated().leftOut[used.findIndex(({ label }) => model.levels(label).upper === top)] ?? null;
   // Without stated σ the residuals say what a band is worth, and a new one will be no better than that.
   const estimated = sigmaKnown || fit.degreesOfFreedom === 0 ? null : Math.sqrt(fit.chiSquare / fit.degreesOfFreedom);
   return {
